@@ -1,0 +1,27 @@
+const segment = (value: string) => encodeURIComponent(value);
+
+/** Every address of the client, built in one place so that a link can never be misspelt. */
+export const paths = {
+  home: () => '/',
+  register: () => '/lots',
+  lot: (code: string) => `/lots/${segment(code)}`,
+  sell: () => '/sell',
+  draft: (code: string) => `/sell/${segment(code)}`,
+  deals: () => '/deals',
+  deal: (code: string) => `/deals/${segment(code)}`,
+  desk: () => '/desk',
+  deskCase: (id: string) => `/desk/certificates/${segment(id)}`,
+  quotes: () => '/quotes',
+  worth: () => '/worth',
+  methods: () => '/methods',
+  cautions: () => '/cautions',
+  signIn: (next?: string) => (next ? `/sign-in?next=${segment(next)}` : '/sign-in'),
+  signUp: (next?: string) => (next ? `/sign-up?next=${segment(next)}` : '/sign-up'),
+  account: () => '/account',
+} as const;
+
+/** Where to go after signing in: only ever an address of our own, so that a link cannot send a member elsewhere. */
+export function safeNext(next: string | null): string {
+  const isOwn = next !== null && /^\/(?![/\\])/.test(next) && !/[\\\u0000-\u001f]/.test(next);
+  return isOwn ? next : paths.home();
+}

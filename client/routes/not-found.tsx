@@ -1,0 +1,3 @@
+import { MissingPage } from '../app/error-page.tsx';
+
+export const Component = MissingPage;
