@@ -1,0 +1,3 @@
+import { runProduct } from './lib/run-product.mjs';
+
+await runProduct({ mode: 'start' });

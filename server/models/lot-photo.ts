@@ -1,0 +1,31 @@
+import {
+  DataTypes,
+  Model,
+  type CreationOptional,
+  type InferAttributes,
+  type InferCreationAttributes,
+} from 'sequelize';
+import { sequelize } from '#server/database/connection.ts';
+
+export class LotPhoto extends Model<InferAttributes<LotPhoto>, InferCreationAttributes<LotPhoto>> {
+  declare id: string;
+  declare lotId: string;
+  declare fileId: string;
+  declare position: number;
+  declare caption: CreationOptional<string>;
+  declare isDrawing: CreationOptional<boolean>;
+  declare createdAt: CreationOptional<Date>;
+}
+
+LotPhoto.init(
+  {
+    id: { type: DataTypes.CHAR(36), primaryKey: true, allowNull: false },
+    lotId: { type: DataTypes.CHAR(36), allowNull: false },
+    fileId: { type: DataTypes.CHAR(36), allowNull: false },
+    position: { type: DataTypes.INTEGER, allowNull: false },
+    caption: { type: DataTypes.STRING(200), allowNull: false, defaultValue: '' },
+    isDrawing: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
+    createdAt: { type: DataTypes.DATE(3), allowNull: false },
+  },
+  { sequelize, tableName: 'lot_photos', modelName: 'LotPhoto', updatedAt: false },
+);

@@ -1,0 +1,50 @@
+/** Every limit that a person can run into, in one place; the documents quote this file. */
+export const RATE_LIMITS = {
+  'sign-in': { windowSeconds: 900, requestsMax: 10 },
+  'sign-up': { windowSeconds: 3600, requestsMax: 20 },
+  valuation: { windowSeconds: 60, requestsMax: 60 },
+  upload: { windowSeconds: 600, requestsMax: 120 },
+  write: { windowSeconds: 60, requestsMax: 120 },
+  read: { windowSeconds: 60, requestsMax: 600 },
+  webhook: { windowSeconds: 60, requestsMax: 3000 },
+} as const;
+export type RateLimitName = keyof typeof RATE_LIMITS;
+
+export const PASSWORD_LENGTH_MIN = 10;
+export const PASSWORD_LENGTH_MAX = 128;
+
+export const PHOTOS_MAX = 12;
+export const PHOTO_BYTES_MAX = 15 * 1024 * 1024;
+export const PHOTO_PIXELS_MAX = 60_000_000;
+export const DOCUMENT_BYTES_MAX = 10 * 1024 * 1024;
+
+export const TITLE_LENGTH_MAX = 120;
+export const DESCRIPTION_LENGTH_MAX = 4000;
+
+/** Lowest price of a lot, in minor units of US dollars. */
+export const PRICE_MINOR_MIN = 2_000n;
+/** Highest price of a lot, in minor units: beyond it a signature on a screen is not enough. */
+export const PRICE_MINOR_MAX = 1_000_000_000n;
+
+export const LOT_OPEN_DAYS_MAX = 90;
+export const REGISTER_PAGE_SIZE = 25;
+/** Counts stop here: "more than 1,000". */
+export const REGISTER_COUNT_MAX = 1_000;
+
+/** Quotes: the defaults of the house. */
+export const QUOTE_POLL_SECONDS = 60;
+export const QUOTE_STALE_SECONDS = 300;
+export const QUOTE_JUMP_PERCENT = { Au: '2', Ag: '4', Pt: '4', Pd: '4' } as const;
+export const QUOTE_CONFIRM_POLLS = 2;
+export const QUOTE_CONFIRM_PERCENT = '0.5';
+export const QUOTE_ALARM_POLLS = 10;
+
+/** Deadlines of a deal, from entering the state. */
+export const FUND_MINUTES = 35;
+export const SHIP_BUSINESS_DAYS = 5;
+export const ARRIVE_DAYS = 10;
+export const INSPECT_DAYS = 5;
+export const CONTESTED_DESK_DAYS = 7;
+
+export const SESSION_IDLE_HOURS = 12;
+export const SESSION_ABSOLUTE_DAYS = 7;
