@@ -32,7 +32,8 @@ export async function runProduct({ mode, onOutput }) {
   start().catch(fail);
   await leaveAfter(ended, async () => {
     await endTools();
-    await product?.stopAll();
+    if (!product) return;
+    await product.stopAll();
     say('Stopped.');
   });
 }
