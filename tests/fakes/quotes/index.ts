@@ -1,0 +1,6 @@
+import { portFromEnvironment, runFakeProcess } from '../kit/serve.ts';
+import { startQuotesFake } from './start-quotes-fake.ts';
+
+await runFakeProcess('Quotes', () =>
+  startQuotesFake({ port: portFromEnvironment('FAKE_PORT', 4102), dataDir: process.env.FAKE_DATA_DIR }),
+);
