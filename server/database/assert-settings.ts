@@ -4,7 +4,7 @@ const WANTED: Readonly<Record<string, string>> = {
   innodb_flush_log_at_trx_commit: '1',
   binlog_format: 'ROW',
   innodb_autoinc_lock_mode: '2',
-  innodb_snapshot_isolation: '1',
+  innodb_snapshot_isolation: 'ON',
   time_zone: '+00:00',
 };
 

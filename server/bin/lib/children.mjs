@@ -113,8 +113,8 @@ function record(children) {
  * Ends what a run that was killed left behind, newest first. A process is only touched when its number, its start time
  * and its boot are those noted: a number alone may by now belong to somebody else.
  */
-export async function endLeftovers() {
-  const noted = readJson(inData('run.json'));
+export async function endLeftovers(file = inData('run.json')) {
+  const noted = readJson(file);
   if (!noted?.children || noted.bootId !== bootId()) return;
   const left = noted.children.filter(({ pid, startedTicks }) => {
     const now = identify(pid);

@@ -1,0 +1,1 @@
+export function endLeftovers(file?: string): Promise<void>;

@@ -1,0 +1,2 @@
+export function freePort(): Promise<number>;
+export function isPortFree(port: number, host?: string): Promise<boolean>;

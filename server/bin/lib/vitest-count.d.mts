@@ -1,0 +1,1 @@
+export function countVitest(reportFile: string, hasWorked: boolean): { passed: number; failed: number };
