@@ -2,8 +2,9 @@ import react from '@vitejs/plugin-react';
 import { defineConfig } from 'vitest/config';
 
 /**
- * Four projects: `unit` needs nothing; `client` runs in jsdom with msw; `server` has a real MariaDB in a throw-away
- * folder; `e2e` starts the whole product beside its own database and drives Debian's Chromium.
+ * Five projects: `unit` needs nothing; `client` runs in jsdom with msw; `server` has a real MariaDB in a throw-away
+ * folder; `boot` starts, kills and restarts the product as a process; `e2e` starts the whole product beside its own
+ * database and drives Debian's Chromium.
  */
 export default defineConfig({
   test: {
@@ -38,6 +39,17 @@ export default defineConfig({
           testTimeout: 20_000,
           hookTimeout: 30_000,
           maxWorkers: 2,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'boot',
+          environment: 'node',
+          include: ['tests/boot/**/*.spec.ts'],
+          testTimeout: 90_000,
+          hookTimeout: 60_000,
+          fileParallelism: false,
         },
       },
       {

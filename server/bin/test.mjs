@@ -73,6 +73,7 @@ async function run() {
   await check('types', nodeTool('typescript/bin/tsc', '-p', 'tsconfig.json'));
   for (const project of ['unit', 'client', 'server']) await vitest(project);
   await buildClient();
+  await vitest('boot');
   await vitest('e2e');
 }
 
