@@ -66,7 +66,7 @@ export function FieldError({ id, children }: FieldErrorProps) {
         strokeWidth="1.5"
         aria-hidden="true"
       >
-        <path d="M6 1 11.200 10.500H.8zM6 4.500v3M6 8.600v.6" />
+        <path d="M6 1 11.2 10.5H.8zM6 4.5v3M6 8.6v.6" />
       </svg>
       <span>{children}</span>
     </p>
