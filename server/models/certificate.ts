@@ -4,9 +4,14 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
 import { type JsonValue } from './columns.ts';
+import type { CertificateResult } from './certificate-result.ts';
+import type { Laboratory } from './laboratory.ts';
+import type { Lot } from './lot.ts';
+import type { StoredFile } from './stored-file.ts';
 
 export class Certificate extends Model<InferAttributes<Certificate>, InferCreationAttributes<Certificate>> {
   declare id: string;
@@ -18,7 +23,7 @@ export class Certificate extends Model<InferAttributes<Certificate>, InferCreati
   declare laboratoryName: string;
   declare number: string;
   declare issuedOn: string;
-  declare sampledBy: 'laboratory' | 'customer' | 'unknown';
+  declare sampling: 'laboratory' | 'whole_piece' | 'customer' | 'not_stated';
   declare itemMassValue: CreationOptional<string | null>;
   declare itemMassUnit: CreationOptional<string | null>;
   declare itemMassGrams: CreationOptional<string | null>;
@@ -39,6 +44,10 @@ export class Certificate extends Model<InferAttributes<Certificate>, InferCreati
   declare lockVersion: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
+  declare lot?: NonAttribute<Lot>;
+  declare file?: NonAttribute<StoredFile>;
+  declare laboratory?: NonAttribute<Laboratory>;
+  declare results?: NonAttribute<CertificateResult[]>;
 }
 
 Certificate.init(
@@ -52,7 +61,7 @@ Certificate.init(
     laboratoryName: { type: DataTypes.STRING(120), allowNull: false },
     number: { type: DataTypes.STRING(60), allowNull: false },
     issuedOn: { type: DataTypes.DATEONLY, allowNull: false },
-    sampledBy: { type: DataTypes.STRING(32), allowNull: false },
+    sampling: { type: DataTypes.STRING(32), allowNull: false },
     itemMassValue: { type: DataTypes.DECIMAL(20, 6) },
     itemMassUnit: { type: DataTypes.STRING(8) },
     itemMassGrams: { type: DataTypes.DECIMAL(30, 15) },

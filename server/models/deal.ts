@@ -4,9 +4,17 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
 import { minorColumn } from './columns.ts';
+import type { DealReceipt } from './deal-receipt.ts';
+import type { Lot } from './lot.ts';
+import type { Member } from './member.ts';
+import type { Parcel } from './parcel.ts';
+import type { Payment } from './payment.ts';
+import type { Payout } from './payout.ts';
+import type { Refund } from './refund.ts';
 
 export class Deal extends Model<InferAttributes<Deal>, InferCreationAttributes<Deal>> {
   declare id: string;
@@ -68,6 +76,14 @@ export class Deal extends Model<InferAttributes<Deal>, InferCreationAttributes<D
   declare lockVersion: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
+  declare lot?: NonAttribute<Lot>;
+  declare seller?: NonAttribute<Member>;
+  declare buyer?: NonAttribute<Member>;
+  declare payment?: NonAttribute<Payment>;
+  declare parcel?: NonAttribute<Parcel>;
+  declare receipt?: NonAttribute<DealReceipt>;
+  declare payout?: NonAttribute<Payout>;
+  declare refund?: NonAttribute<Refund>;
 }
 
 Deal.init(

@@ -4,9 +4,11 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
 import { minorColumn } from './columns.ts';
+import type { LedgerAccount } from './ledger-account.ts';
 
 export class LedgerEntry extends Model<InferAttributes<LedgerEntry>, InferCreationAttributes<LedgerEntry>> {
   declare id: string;
@@ -15,6 +17,7 @@ export class LedgerEntry extends Model<InferAttributes<LedgerEntry>, InferCreati
   declare amountMinor: bigint;
   declare currency: string;
   declare createdAt: CreationOptional<Date>;
+  declare account?: NonAttribute<LedgerAccount>;
 }
 
 LedgerEntry.init(

@@ -4,8 +4,10 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
+import type { LedgerEntry } from './ledger-entry.ts';
 
 export class LedgerJournal extends Model<
   InferAttributes<LedgerJournal>,
@@ -28,6 +30,7 @@ export class LedgerJournal extends Model<
   declare memo: string;
   declare at: Date;
   declare createdAt: CreationOptional<Date>;
+  declare entries?: NonAttribute<LedgerEntry[]>;
 }
 
 LedgerJournal.init(

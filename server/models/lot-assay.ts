@@ -12,7 +12,7 @@ export class LotAssay extends Model<InferAttributes<LotAssay>, InferCreationAttr
   declare lotId: string;
   declare assayVersion: number;
   declare position: number;
-  declare metal: 'Au' | 'Ag' | 'Pt' | 'Pd';
+  declare element: string;
   declare finenessValue: string;
   declare finenessUnit: string;
   declare finenessPermille: string;
@@ -31,7 +31,7 @@ LotAssay.init(
     lotId: { type: DataTypes.CHAR(36), allowNull: false },
     assayVersion: { type: DataTypes.INTEGER, allowNull: false },
     position: { type: DataTypes.INTEGER, allowNull: false },
-    metal: { type: DataTypes.STRING(32), allowNull: false },
+    element: { type: DataTypes.STRING(4), allowNull: false },
     finenessValue: { type: DataTypes.DECIMAL(20, 6), allowNull: false },
     finenessUnit: { type: DataTypes.STRING(12), allowNull: false },
     finenessPermille: { type: DataTypes.DECIMAL(20, 12), allowNull: false },

@@ -4,8 +4,10 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
+import type { StoredFile } from './stored-file.ts';
 
 export class LotPhoto extends Model<InferAttributes<LotPhoto>, InferCreationAttributes<LotPhoto>> {
   declare id: string;
@@ -15,6 +17,7 @@ export class LotPhoto extends Model<InferAttributes<LotPhoto>, InferCreationAttr
   declare caption: CreationOptional<string>;
   declare isDrawing: CreationOptional<boolean>;
   declare createdAt: CreationOptional<Date>;
+  declare file?: NonAttribute<StoredFile>;
 }
 
 LotPhoto.init(

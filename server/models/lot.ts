@@ -4,9 +4,14 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
 import { minorColumn, type JsonValue } from './columns.ts';
+import type { Certificate } from './certificate.ts';
+import type { LotAssay } from './lot-assay.ts';
+import type { LotPhoto } from './lot-photo.ts';
+import type { Member } from './member.ts';
 
 export class Lot extends Model<InferAttributes<Lot>, InferCreationAttributes<Lot>> {
   declare id: string;
@@ -49,6 +54,10 @@ export class Lot extends Model<InferAttributes<Lot>, InferCreationAttributes<Lot
   declare lockVersion: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
+  declare seller?: NonAttribute<Member>;
+  declare assays?: NonAttribute<LotAssay[]>;
+  declare photos?: NonAttribute<LotPhoto[]>;
+  declare certificates?: NonAttribute<Certificate[]>;
 }
 
 Lot.init(

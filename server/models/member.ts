@@ -4,8 +4,10 @@ import {
   type CreationOptional,
   type InferAttributes,
   type InferCreationAttributes,
+  type NonAttribute,
 } from 'sequelize';
 import { sequelize } from '#server/database/connection.ts';
+import type { PayoutAccount } from './payout-account.ts';
 
 export class Member extends Model<InferAttributes<Member>, InferCreationAttributes<Member>> {
   declare id: string;
@@ -21,6 +23,7 @@ export class Member extends Model<InferAttributes<Member>, InferCreationAttribut
   declare lockVersion: CreationOptional<number>;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
+  declare payoutAccount?: NonAttribute<PayoutAccount>;
 }
 
 Member.init(

@@ -7,7 +7,7 @@ export const up: Migration = async ({ context }) => {
       lot_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       assay_version INT NOT NULL,
       position INT NOT NULL,
-      metal VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (metal IN ('Au', 'Ag', 'Pt', 'Pd')),
+      element VARCHAR(4) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       fineness_value DECIMAL(20,6) NOT NULL CHECK (fineness_value > 0),
       fineness_unit VARCHAR(12) NOT NULL,
       fineness_permille DECIMAL(20,12) NOT NULL CHECK (fineness_permille > 0 AND fineness_permille <= 1000),
@@ -18,7 +18,7 @@ export const up: Migration = async ({ context }) => {
       method VARCHAR(32) NOT NULL,
       is_paid_for TINYINT(1) NOT NULL,
       created_at DATETIME(3) NOT NULL,
-      UNIQUE KEY lot_assays_metal (lot_id, assay_version, metal),
+      UNIQUE KEY lot_assays_element (lot_id, assay_version, element),
       CONSTRAINT lot_assays_lot_fk FOREIGN KEY (lot_id) REFERENCES lots (id)
     ) ENGINE=InnoDB
   `);

@@ -12,7 +12,7 @@ export const up: Migration = async ({ context }) => {
       laboratory_name VARCHAR(120) NOT NULL,
       number VARCHAR(60) NOT NULL,
       issued_on DATE NOT NULL,
-      sampled_by VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (sampled_by IN ('laboratory', 'customer', 'unknown')),
+      sampling VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (sampling IN ('laboratory', 'whole_piece', 'customer', 'not_stated')),
       item_mass_value DECIMAL(20,6) NULL,
       item_mass_unit VARCHAR(8) NULL,
       item_mass_grams DECIMAL(30,15) NULL,
