@@ -11,7 +11,7 @@ export async function runProduct({ mode, onOutput }) {
   const startedAt = performance.now();
   let product;
   let isReady = false;
-  const { ended, fail } = watchForEnd({ force: () => product?.forceAll() });
+  const { ended, fail, finish } = watchForEnd({ force: () => product?.forceAll() });
   const describe = () => ({ pid: process.pid, url: product?.urls.product, isReady });
 
   async function start() {
@@ -25,10 +25,11 @@ export async function runProduct({ mode, onOutput }) {
     await product.startAll();
     isReady = true;
     announce({ urls: product.urls, startedAt });
-    // A program that started this one (the browser tests do) hears the addresses in this way.
+    // A program that started this one (the browser tests do) hears the addresses in this way; when it goes, we go.
     process.send?.({ urls: product.urls, ports: product.ports, env: product.env });
   }
 
+  process.once('disconnect', finish);
   start().catch(fail);
   await leaveAfter(ended, async () => {
     await endTools();

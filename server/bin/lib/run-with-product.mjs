@@ -20,7 +20,8 @@ export async function runWithProduct(usage, command, { before, needsAll = true }
 
   async function run() {
     if (!command) throw new Halt(`Usage: ${usage}`);
-    if (await whoRuns()) return command(besideRunning());
+    const other = await whoRuns();
+    if (other) return command(besideRunning(other));
     await prepareStart({ describe: () => ({ pid: process.pid }), needsClient: false });
     before?.();
     product = await createProduct({
@@ -47,8 +48,9 @@ export async function runWithProduct(usage, command, { before, needsAll = true }
   });
 }
 
-function besideRunning() {
+function besideRunning({ url }) {
   const ports = readJson(inData('ports.json'));
+  if (!ports || !url) throw new Halt('Scruple is just starting: try again when it is ready.');
   const secrets = loadSecrets();
   loadSettingsFile();
   const env = {
