@@ -13,6 +13,7 @@ await runFakeProcess('Carrier', () =>
   startCarrierFake({
     port: portFromEnvironment('FAKE_PORT', 4105),
     dataDir: process.env.FAKE_DATA_DIR,
+    apiKey: process.env.FAKE_API_KEY,
     deliverySeconds: deliverySeconds(),
   }),
 );

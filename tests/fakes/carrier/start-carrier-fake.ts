@@ -11,7 +11,7 @@ import {
 } from '../kit/serve.ts';
 import { openStateFile } from '../kit/state-file.ts';
 import { renderCarrierPage } from './carrier-page.ts';
-import { createTrackers, initialTrackersState, orders, type Trackers } from './trackers.ts';
+import { initialTrackersState, orders, Trackers } from './trackers.ts';
 
 export type CarrierFakeOptions = {
   port?: number;
@@ -76,7 +76,7 @@ function mountControl(app: Express, trackers: Trackers) {
 export async function startCarrierFake(options: CarrierFakeOptions = {}): Promise<RunningFake> {
   const file = openStateFile(options.dataDir, 'carrier.json', initialTrackersState);
   const deliverySeconds = options.deliverySeconds === undefined ? 120 : options.deliverySeconds;
-  const trackers = createTrackers(file, deliverySeconds, options.systemNowMs ?? Date.now);
+  const trackers = new Trackers(file, deliverySeconds, options.systemNowMs ?? Date.now);
   const app = express();
   app.use(express.json(), express.urlencoded({ extended: false }));
   mountService(app, trackers, options.apiKey, options.slowMs ?? 10_000);

@@ -60,101 +60,104 @@ function shown({ id, carrier, trackingNumber, reference, status, events }: Kept)
   return { id, carrier, trackingNumber, reference, status, events };
 }
 
-/** Parcels move by their plan as the clock passes; `deliverySeconds` null leaves them to the buttons. */
-export function createTrackers(
-  { state, save }: StateFile<TrackersState>,
-  deliverySeconds: number | null,
-  systemNowMs: () => number,
-) {
-  const nowMs = () => systemNowMs() + state.clockOffsetMs;
+function happen(tracker: Kept, event: Omit<TrackerEvent, 'at'>, atMs: number) {
+  tracker.events.push({ at: new Date(atMs).toISOString(), ...event });
+  tracker.status = event.code;
+}
 
-  function happen(tracker: Kept, event: Omit<TrackerEvent, 'at'>, atMs: number) {
-    tracker.events.push({ at: new Date(atMs).toISOString(), ...event });
-    tracker.status = event.code;
+function planFrom(startMs: number, deliverySeconds: number | null): Kept['planned'] {
+  if (deliverySeconds === null) return [];
+  const afterMs = (share: number) => startMs + Math.trunc(deliverySeconds * 1000 * share);
+  return [
+    { atMs: afterMs(0.25), event: happenings.accepted },
+    { atMs: afterMs(0.5), event: happenings.in_transit },
+    { atMs: afterMs(1), event: happenings.signed },
+  ];
+}
+
+/** Parcels move by their plan as the clock passes; `deliverySeconds` null leaves them to the buttons. */
+export class Trackers {
+  readonly state: TrackersState;
+  readonly #save: () => void;
+  readonly #deliverySeconds: number | null;
+  readonly #systemNowMs: () => number;
+
+  constructor(file: StateFile<TrackersState>, deliverySeconds: number | null, systemNowMs: () => number) {
+    this.state = file.state;
+    this.#save = file.save;
+    this.#deliverySeconds = deliverySeconds;
+    this.#systemNowMs = systemNowMs;
   }
 
-  function catchUp() {
+  nowMs(): number {
+    return this.#systemNowMs() + this.state.clockOffsetMs;
+  }
+
+  #catchUp() {
     let isChanged = false;
-    for (const tracker of state.trackers) {
-      while (tracker.planned[0] && tracker.planned[0].atMs <= nowMs()) {
+    for (const tracker of this.state.trackers) {
+      while (tracker.planned[0] && tracker.planned[0].atMs <= this.nowMs()) {
         const due = tracker.planned.shift();
         if (due) happen(tracker, due.event, due.atMs);
         isChanged = true;
       }
     }
-    if (isChanged) save();
+    if (isChanged) this.#save();
   }
 
-  function planFrom(startMs: number): Kept['planned'] {
-    if (deliverySeconds === null) return [];
-    const afterMs = (share: number) => startMs + Math.trunc(deliverySeconds * 1000 * share);
-    return [
-      { atMs: afterMs(0.25), event: happenings.accepted },
-      { atMs: afterMs(0.5), event: happenings.in_transit },
-      { atMs: afterMs(1), event: happenings.signed },
-    ];
+  #known(carrier: string, trackingNumber: string): Kept | undefined {
+    this.#catchUp();
+    return this.state.trackers.find(
+      (each) => same(each.carrier, carrier) && same(each.trackingNumber, trackingNumber),
+    );
   }
 
-  return {
-    state,
-    nowMs,
-    register(carrier: string, trackingNumber: string, reference: string) {
-      catchUp();
-      const known = state.trackers.find(
-        (each) => same(each.carrier, carrier) && same(each.trackingNumber, trackingNumber),
-      );
-      if (known) return { tracker: shown(known), isNew: false };
-      const id = `trk_${String(state.nextNumber).padStart(6, '0')}`;
-      const planned = planFrom(nowMs());
-      const fresh: Kept = {
-        id,
-        carrier,
-        trackingNumber,
-        reference,
-        status: 'registered',
-        events: [],
-        planned,
-      };
-      happen(fresh, happenings.registered, nowMs());
-      state.nextNumber += 1;
-      state.trackers.push(fresh);
-      save();
-      return { tracker: shown(fresh), isNew: true };
-    },
-    find(carrier: string, trackingNumber: string): Tracker | null {
-      catchUp();
-      const known = state.trackers.find(
-        (each) => same(each.carrier, carrier) && same(each.trackingNumber, trackingNumber),
-      );
-      return known ? shown(known) : null;
-    },
-    newestFirst(): Tracker[] {
-      catchUp();
-      return state.trackers.map(shown).reverse();
-    },
-    order(trackingNumber: string, order: Order): Tracker {
-      catchUp();
-      const tracker = state.trackers.findLast((each) => same(each.trackingNumber, trackingNumber));
-      if (!tracker) throw new BadRequest('no such tracking number', 404);
-      if (isEnded(tracker)) throw new BadRequest(`the parcel is already ${tracker.status}`, 409);
-      tracker.planned = [];
-      const isDelivery = order === 'deliver' || order === 'deliver-unsigned';
-      if (isDelivery && tracker.status === 'registered') happen(tracker, happenings.accepted, nowMs());
-      if (isDelivery && tracker.status === 'accepted') happen(tracker, happenings.in_transit, nowMs());
-      happen(tracker, orderHappening[order], nowMs());
-      save();
-      return shown(tracker);
-    },
-    advance(seconds: number) {
-      state.clockOffsetMs += seconds * 1000;
-      save();
-      catchUp();
-    },
-    setFault(fault: Fault) {
-      state.fault = fault;
-      save();
-    },
-  };
+  register(carrier: string, trackingNumber: string, reference: string) {
+    const known = this.#known(carrier, trackingNumber);
+    if (known) return { tracker: shown(known), isNew: false };
+    const id = `trk_${String(this.state.nextNumber).padStart(6, '0')}`;
+    const planned = planFrom(this.nowMs(), this.#deliverySeconds);
+    const fresh: Kept = { id, carrier, trackingNumber, reference, status: 'registered', events: [], planned };
+    happen(fresh, happenings.registered, this.nowMs());
+    this.state.nextNumber += 1;
+    this.state.trackers.push(fresh);
+    this.#save();
+    return { tracker: shown(fresh), isNew: true };
+  }
+
+  find(carrier: string, trackingNumber: string): Tracker | null {
+    const known = this.#known(carrier, trackingNumber);
+    return known ? shown(known) : null;
+  }
+
+  newestFirst(): Tracker[] {
+    this.#catchUp();
+    return this.state.trackers.map(shown).reverse();
+  }
+
+  /** Ends the journey of the newest parcel with this number. */
+  order(trackingNumber: string, order: Order): Tracker {
+    this.#catchUp();
+    const tracker = this.state.trackers.findLast((each) => same(each.trackingNumber, trackingNumber));
+    if (!tracker) throw new BadRequest('no such tracking number', 404);
+    if (isEnded(tracker)) throw new BadRequest(`the parcel is already ${tracker.status}`, 409);
+    tracker.planned = [];
+    const isDelivery = order === 'deliver' || order === 'deliver-unsigned';
+    if (isDelivery && tracker.status === 'registered') happen(tracker, happenings.accepted, this.nowMs());
+    if (isDelivery && tracker.status === 'accepted') happen(tracker, happenings.in_transit, this.nowMs());
+    happen(tracker, orderHappening[order], this.nowMs());
+    this.#save();
+    return shown(tracker);
+  }
+
+  advance(seconds: number) {
+    this.state.clockOffsetMs += seconds * 1000;
+    this.#save();
+    this.#catchUp();
+  }
+
+  setFault(fault: Fault) {
+    this.state.fault = fault;
+    this.#save();
+  }
 }
-
-export type Trackers = ReturnType<typeof createTrackers>;

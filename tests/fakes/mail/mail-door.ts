@@ -22,84 +22,91 @@ async function readSource(stream: SMTPServerDataStream): Promise<Buffer> {
 }
 
 /** The SMTP side: accepts mail into the store, or misbehaves as ordered. */
-export async function openMailDoor(store: MailStore, requestedPort: number) {
-  let fault: MailFault = { kind: 'none' };
-  let server: SMTPServer | null = null;
-  let port = requestedPort;
+export class MailDoor {
+  fault: MailFault = { kind: 'none' };
+  port: number;
+  readonly #store: MailStore;
+  #server: SMTPServer | null = null;
 
-  const spend = () => {
-    if (!('count' in fault) || fault.count === null) return;
-    fault.count -= 1;
-    if (fault.count <= 0) fault = { kind: 'none' };
-  };
-
-  function refusal(address: string): Error | null {
-    if (fault.kind !== 'refuse') return null;
-    if (fault.to && fault.to.toLowerCase() !== address.toLowerCase()) return null;
-    const { code } = fault;
-    spend();
-    return smtpError(code, code === 450 ? 'Mailbox busy, try again later' : 'No such mailbox here');
+  constructor(store: MailStore, port: number) {
+    this.#store = store;
+    this.port = port;
   }
 
-  async function receive(stream: SMTPServerDataStream, session: SMTPServerSession) {
+  #spend() {
+    if (!('count' in this.fault) || this.fault.count === null) return;
+    this.fault.count -= 1;
+    if (this.fault.count <= 0) this.fault = { kind: 'none' };
+  }
+
+  #refusal(address: string): Error | null {
+    const { fault } = this;
+    if (fault.kind !== 'refuse') return null;
+    if (fault.to && fault.to.toLowerCase() !== address.toLowerCase()) return null;
+    this.#spend();
+    return smtpError(
+      fault.code,
+      fault.code === 450 ? 'Mailbox busy, try again later' : 'No such mailbox here',
+    );
+  }
+
+  async #receive(stream: SMTPServerDataStream, session: SMTPServerSession) {
     const source = await readSource(stream);
     if (stream.sizeExceeded) throw smtpError(552, 'Message too large');
-    if (fault.kind === 'delay') {
-      const { seconds } = fault;
-      spend();
+    if (this.fault.kind === 'delay') {
+      const { seconds } = this.fault;
+      this.#spend();
       await wait(seconds * 1000);
     }
     const { mailFrom, rcptTo } = session.envelope;
     const to = rcptTo.map(({ address }) => address);
-    return store.keep(source, mailFrom ? mailFrom.address : '', to);
+    return this.#store.keep(source, mailFrom ? mailFrom.address : '', to);
   }
 
-  function open(): Promise<void> {
-    const opened = new SMTPServer({
+  #makeServer(): SMTPServer {
+    const server = new SMTPServer({
       authOptional: true,
       disabledCommands: ['STARTTLS'],
       disableReverseLookup: true,
       size: bytesMax,
       closeTimeout: 500,
       onAuth: (_auth, _session, callback) => callback(null, { user: 'anyone' }),
-      onRcptTo: ({ address }, _session, callback) => callback(refusal(address)),
+      onRcptTo: ({ address }, _session, callback) => callback(this.#refusal(address)),
       onData: (stream, session, callback) => {
-        receive(stream, session).then(
+        this.#receive(stream, session).then(
           ({ id }) => callback(null, `kept as ${id}`),
           (error: unknown) => callback(error instanceof Error ? error : new Error(String(error))),
         );
       },
     });
     // A client that hangs up in the middle is its own affair, not a fault of this process.
-    opened.on('error', (error) => process.stderr.write(`smtp: ${error.message}\n`));
+    server.on('error', (error) => process.stderr.write(`smtp: ${error.message}\n`));
+    return server;
+  }
+
+  open(): Promise<void> {
+    if (this.#server) return Promise.resolve();
+    const opened = this.#makeServer();
+    this.#server = opened;
     return new Promise((resolve, reject) => {
       opened.server.once('error', reject);
-      opened.listen(port, '127.0.0.1', () => {
+      opened.listen(this.port, '127.0.0.1', () => {
         opened.server.off('error', reject);
-        port = (opened.server.address() as AddressInfo).port;
-        server = opened;
+        this.port = (opened.server.address() as AddressInfo).port;
         resolve();
       });
     });
   }
 
-  function shut(): Promise<void> {
-    const closing = server;
-    server = null;
+  close(): Promise<void> {
+    const closing = this.#server;
+    this.#server = null;
     return closing ? new Promise((resolve) => closing.close(() => resolve())) : Promise.resolve();
   }
 
-  await open();
-  return {
-    port: () => port,
-    fault: () => fault,
-    async setFault(next: MailFault) {
-      fault = next;
-      if (next.kind === 'down') await shut();
-      else if (!server) await open();
-    },
-    close: shut,
-  };
+  async setFault(next: MailFault) {
+    this.fault = next;
+    if (next.kind === 'down') await this.close();
+    else await this.open();
+  }
 }
-
-export type MailDoor = Awaited<ReturnType<typeof openMailDoor>>;

@@ -16,7 +16,7 @@ export function renderMailbox(store: MailStore, door: MailDoor, to: string | nul
     .recipients()
     .map((each) => `<option${each === to ? ' selected' : ''}>${escapeHtml(each)}</option>`)
     .join('');
-  const fault = door.fault();
+  const fault = door.fault;
   const faults = [
     button('/control/faults', 'All well', { kind: 'none' }),
     button('/control/faults', 'Refuse for now (450)', { kind: 'refuse', code: '450' }),
@@ -31,7 +31,7 @@ export function renderMailbox(store: MailStore, door: MailDoor, to: string | nul
 <button>Open mailbox</button></form>
 <p>${messages.length} ${messages.length === 1 ? 'message' : 'messages'}, newest first.</p>
 <ul>${messages.map(messageLine).join('\n')}</ul>
-<section><h2>Mail server</h2><p>Now: ${fault.kind}${details}; SMTP port ${door.port()}.</p>
+<section><h2>Mail server</h2><p>Now: ${fault.kind}${details}; SMTP port ${door.port}.</p>
 <div>${faults.join('')}</div></section>`,
   );
 }

@@ -8,7 +8,7 @@ import {
   serveOnLoopback,
   type RunningFake,
 } from '../kit/serve.ts';
-import { openMailDoor, type MailDoor } from './mail-door.ts';
+import { MailDoor } from './mail-door.ts';
 import { renderMailbox, renderMessage } from './mail-pages.ts';
 import { openMailStore, type KeptMessage, type MailStore } from './mail-store.ts';
 
@@ -86,7 +86,7 @@ function mountControl(app: Express, store: MailStore, door: MailDoor) {
   });
   app.post('/control/faults', async (req, res) => {
     await door.setFault(readBody(faultSchema, req.body));
-    answerControl(req, res, { fault: door.fault() });
+    answerControl(req, res, { fault: door.fault });
   });
   app.post('/control/clear', (req, res) => {
     store.clear();
@@ -97,7 +97,8 @@ function mountControl(app: Express, store: MailStore, door: MailDoor) {
 /** Starts the mail server's stand-in: SMTP on one loopback port, the mailbox page on another. */
 export async function startMailFake(options: MailFakeOptions = {}): Promise<RunningMailFake> {
   const store = await openMailStore(options.dataDir, options.systemNowMs ?? Date.now);
-  const door = await openMailDoor(store, options.smtpPort ?? 0);
+  const door = new MailDoor(store, options.smtpPort ?? 0);
+  await door.open();
   const app = express();
   app.use(express.json(), express.urlencoded({ extended: false }));
   mountPages(app, store, door);
@@ -106,8 +107,8 @@ export async function startMailFake(options: MailFakeOptions = {}): Promise<Runn
   const web = await serveOnLoopback(app, options.port ?? 0);
   return {
     ...web,
-    smtpPort: door.port(),
-    smtpUrl: `smtp://127.0.0.1:${door.port()}`,
+    smtpPort: door.port,
+    smtpUrl: `smtp://127.0.0.1:${door.port}`,
     close: async () => {
       await door.close();
       await web.close();

@@ -9,6 +9,7 @@ import {
   spread,
   stepMs,
   type QuotedCode,
+  type Walk,
 } from './walk.ts';
 
 export const codeScenarios = [
@@ -75,25 +76,61 @@ function nextFridayEvening(nowMs: number): number {
   return evening > nowMs ? evening : evening + 7 * dayMs;
 }
 
-/** What the stand-in would quote now, and the orders that disturb it. */
-export function createQuoteBook({ state, save }: StateFile<QuoteBookState>, systemNowMs: () => number) {
-  const walk = createWalk(state.seed);
-  const nowMs = () => systemNowMs() + state.clockOffsetMs;
-  const stepAt = (ms: number) => Math.floor((ms - state.startedAtMs) / stepMs);
-  const isClosed = () => state.closure !== null && nowMs() < state.closure.untilMs;
-  const valueMs = () => (isClosed() && state.closure ? state.closure.fromMs : nowMs());
+const isOneOf = <Name extends string>(names: readonly Name[], text: string): text is Name =>
+  (names as readonly string[]).includes(text);
 
-  function plainMid(code: QuotedCode): bigint {
-    const pin = state.pins[code];
-    return (pin && microsFromText(pin)) || walk.midMicros(code, stepAt(valueMs()));
+/** Counts one poll; true when that was the last. */
+function isSpent(running: { pollsLeft: number | null }): boolean {
+  if (running.pollsLeft === null) return false;
+  running.pollsLeft -= 1;
+  return running.pollsLeft <= 0;
+}
+
+/** What the stand-in would quote now, and the orders that disturb it. */
+export class QuoteBook {
+  readonly state: QuoteBookState;
+  readonly #save: () => void;
+  readonly #systemNowMs: () => number;
+  readonly #walk: Walk;
+
+  constructor(file: StateFile<QuoteBookState>, systemNowMs: () => number) {
+    this.state = file.state;
+    this.#save = file.save;
+    this.#systemNowMs = systemNowMs;
+    this.#walk = createWalk(file.state.seed);
   }
 
-  function entry(code: QuotedCode): QuoteEntry {
-    const running = state.codes[code];
-    const isSpike = running?.name === 'spike';
-    const mid = isSpike ? raiseByHundredths(plainMid(code), BigInt(running.hundredths)) : plainMid(code);
+  nowMs(): number {
+    return this.#systemNowMs() + this.state.clockOffsetMs;
+  }
+
+  #closure(): { fromMs: number; untilMs: number } | null {
+    const { closure } = this.state;
+    return closure && this.nowMs() < closure.untilMs ? closure : null;
+  }
+
+  #walkMid(code: QuotedCode, ms: number): bigint {
+    return this.#walk.midMicros(code, Math.floor((ms - this.state.startedAtMs) / stepMs));
+  }
+
+  market(): { open: boolean; until: string } {
+    const closure = this.#closure();
+    const untilMs = closure ? closure.untilMs : nextFridayEvening(this.nowMs());
+    return { open: closure === null, until: new Date(untilMs).toISOString() };
+  }
+
+  entries(codes: readonly QuotedCode[]): QuoteEntry[] {
+    return codes.map((code) => this.#entry(code));
+  }
+
+  #entry(code: QuotedCode): QuoteEntry {
+    const running = this.state.codes[code];
+    const valueMs = this.#closure()?.fromMs ?? this.nowMs();
+    const pin = this.state.pins[code];
+    const calm = (pin && microsFromText(pin)) || this.#walkMid(code, valueMs);
+    const mid = running?.name === 'spike' ? raiseByHundredths(calm, BigInt(running.hundredths)) : calm;
     const { bid, ask } = spread(code, mid);
-    const at = new Date(valueMs() - (running?.name === 'stale' ? staleAgeMs : 0)).toISOString();
+    const at = new Date(valueMs - (running?.name === 'stale' ? staleAgeMs : 0)).toISOString();
     const plain = { code, bid: centsText(bid), ask: centsText(ask), mid: centsText(mid), at };
     if (running?.name === 'garbage-nan') return { ...plain, mid: 'NaN' };
     if (running?.name === 'garbage-huge') return { ...plain, mid: '999999999999.00', ask: '999999999999.00' };
@@ -102,79 +139,63 @@ export function createQuoteBook({ state, save }: StateFile<QuoteBookState>, syst
     return plain;
   }
 
-  function countPoll(codes: readonly QuotedCode[]) {
-    const spent = (running: Running<unknown>) => {
-      if (running.pollsLeft !== null) running.pollsLeft -= 1;
-      return running.pollsLeft !== null && running.pollsLeft <= 0;
-    };
+  countPoll(codes: readonly QuotedCode[]) {
     for (const code of codes) {
-      const running = state.codes[code];
-      if (running && spent(running)) delete state.codes[code];
+      const running = this.state.codes[code];
+      if (running && isSpent(running)) delete this.state.codes[code];
     }
-    save();
+    this.#save();
   }
 
-  return {
-    state,
-    nowMs,
-    market: () => ({
-      open: !isClosed(),
-      until: new Date(
-        isClosed() && state.closure ? state.closure.untilMs : nextFridayEvening(nowMs()),
-      ).toISOString(),
-    }),
-    entries: (codes: readonly QuotedCode[]) => codes.map(entry),
-    countPoll,
-    /** The fault of this request, counted against its polls. */
-    takeServiceScenario(): ServiceScenario | null {
-      const running = state.service;
-      if (!running) return null;
-      if (running.pollsLeft !== null) {
-        running.pollsLeft -= 1;
-        if (running.pollsLeft <= 0) state.service = null;
-        save();
-      }
-      return running.name;
-    },
-    order({ scenario, code, percent, polls }: ScenarioOrder) {
-      const codes = code ? [code] : quotedCodes;
-      if (scenario === 'normal') {
-        for (const each of codes) delete state.codes[each];
-        if (!code) Object.assign(state, { service: null, closure: null, pins: {} });
-      } else if ((codeScenarios as readonly string[]).includes(scenario)) {
-        const hundredths = percentHundredths(percent);
-        for (const each of codes)
-          state.codes[each] = { name: scenario as CodeScenario, hundredths, pollsLeft: polls };
-      } else if ((serviceScenarios as readonly string[]).includes(scenario)) {
-        if (code) throw new BadRequest(`${scenario} concerns the whole service: leave out code`);
-        if (scenario === 'closed') state.closure = { fromMs: nowMs(), untilMs: nowMs() + closureMs };
-        else state.service = { name: scenario as ServiceScenario, hundredths: '0', pollsLeft: polls };
-      } else throw new BadRequest(`unknown scenario "${scenario}"`);
-      save();
-    },
-    /** Holds one value until it is released (null) or everything is set to normal. */
-    pin(code: QuotedCode, mid: string | null) {
-      if (mid === null) delete state.pins[code];
-      else if (microsFromText(mid)) state.pins[code] = mid;
-      else throw new BadRequest('mid: a positive decimal string');
-      save();
-    },
-    advance(seconds: number) {
-      state.clockOffsetMs += seconds * 1000;
-      save();
-    },
-    history(code: QuotedCode, fromDay: number, toDay: number) {
-      const oldest = Math.floor(state.startedAtMs / dayMs) - historyDays;
-      const days: { date: string; mid: string; at: string }[] = [];
-      for (let day = Math.max(fromDay, oldest); day <= toDay; day += 1) {
-        const fixingMs = day * dayMs + fixingHourMs;
-        if (fixingMs > nowMs()) break;
-        const at = new Date(fixingMs).toISOString();
-        days.push({ date: at.slice(0, 10), mid: centsText(walk.midMicros(code, stepAt(fixingMs))), at });
-      }
-      return days;
-    },
-  };
-}
+  /** The fault of this request, counted against its polls. */
+  takeServiceScenario(): ServiceScenario | null {
+    const running = this.state.service;
+    if (!running) return null;
+    if (isSpent(running)) this.state.service = null;
+    this.#save();
+    return running.name;
+  }
 
-export type QuoteBook = ReturnType<typeof createQuoteBook>;
+  order({ scenario, code, percent, polls }: ScenarioOrder) {
+    const codes = code ? [code] : quotedCodes;
+    if (scenario === 'normal') {
+      for (const each of codes) delete this.state.codes[each];
+      if (!code) Object.assign(this.state, { service: null, closure: null, pins: {} });
+    } else if (isOneOf(codeScenarios, scenario)) {
+      const hundredths = percentHundredths(percent);
+      for (const each of codes) this.state.codes[each] = { name: scenario, hundredths, pollsLeft: polls };
+    } else if (isOneOf(serviceScenarios, scenario)) {
+      if (code) throw new BadRequest(`${scenario} concerns the whole service: leave out code`);
+      const nowMs = this.nowMs();
+      if (scenario === 'closed') this.state.closure = { fromMs: nowMs, untilMs: nowMs + closureMs };
+      else this.state.service = { name: scenario, hundredths: '0', pollsLeft: polls };
+    } else throw new BadRequest(`unknown scenario "${scenario}"`);
+    this.#save();
+  }
+
+  /** Holds one value until it is released (null) or everything is set to normal. */
+  pin(code: QuotedCode, mid: string | null) {
+    if (mid === null) delete this.state.pins[code];
+    else if (microsFromText(mid)) this.state.pins[code] = mid;
+    else throw new BadRequest('mid: a positive decimal string');
+    this.#save();
+  }
+
+  advance(seconds: number) {
+    this.state.clockOffsetMs += seconds * 1000;
+    this.#save();
+  }
+
+  /** Days are counted from 1970-01-01. A day whose fixing time has not come yet has no value. */
+  history(code: QuotedCode, fromDay: number, toDay: number) {
+    const oldest = Math.floor(this.state.startedAtMs / dayMs) - historyDays;
+    const days: { date: string; mid: string; at: string }[] = [];
+    for (let day = Math.max(fromDay, oldest); day <= toDay; day += 1) {
+      const fixingMs = day * dayMs + fixingHourMs;
+      if (fixingMs > this.nowMs()) break;
+      const at = new Date(fixingMs).toISOString();
+      days.push({ date: at.slice(0, 10), mid: centsText(this.#walkMid(code, fixingMs)), at });
+    }
+    return days;
+  }
+}

@@ -10,7 +10,7 @@ import {
   type RunningFake,
 } from '../kit/serve.ts';
 import { openStateFile } from '../kit/state-file.ts';
-import { createQuoteBook, initialBookState, type QuoteBook } from './book.ts';
+import { initialBookState, QuoteBook } from './book.ts';
 import { renderQuotesPage } from './quotes-page.ts';
 import { quotedCodes, type QuotedCode } from './walk.ts';
 
@@ -117,7 +117,7 @@ export async function startQuotesFake(options: QuotesFakeOptions = {}): Promise<
   const file = openStateFile(options.dataDir, 'quotes.json', () =>
     initialBookState(options.seed ?? 20, options.startedAtMs ?? systemNowMs()),
   );
-  const book = createQuoteBook(file, systemNowMs);
+  const book = new QuoteBook(file, systemNowMs);
   const app = express();
   app.use(express.json(), express.urlencoded({ extended: false }));
   mountService(app, book, options.apiKey, options.slowMs ?? 10_000);
