@@ -1,4 +1,4 @@
-import mariadb from 'mariadb';
+import mariadb, { type Connection } from 'mariadb';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
 import { APPEND_ONLY_TABLES } from '#server/database/migrate.ts';
 
@@ -14,8 +14,8 @@ function connect(address: string | undefined) {
 }
 
 describe('the database that each test file gets', () => {
-  let app: mariadb.Connection;
-  let owner: mariadb.Connection;
+  let app: Connection;
+  let owner: Connection;
   beforeAll(async () => {
     app = await connect(process.env.DATABASE_URL);
     owner = await connect(process.env.DATABASE_OWNER_URL);

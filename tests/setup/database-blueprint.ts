@@ -1,4 +1,4 @@
-import mariadb from 'mariadb';
+import mariadb, { type Connection } from 'mariadb';
 
 /** All it takes to make another database like a migrated one, read once so that a copy costs one round trip. */
 export interface DatabaseBlueprint {
@@ -47,7 +47,7 @@ export async function readBlueprint(port: number, source: string): Promise<Datab
 }
 
 /** A copy without them would differ from production, so their first appearance must be noticed here. */
-async function refuseWhatIsNotCopied(connection: mariadb.Connection, source: string): Promise<void> {
+async function refuseWhatIsNotCopied(connection: Connection, source: string): Promise<void> {
   const found: { kind: string; count: string | number | bigint }[] = await connection.query(
     `SELECT 'triggers' AS kind, COUNT(*) AS count FROM information_schema.triggers WHERE trigger_schema = :source
      UNION ALL SELECT 'views', COUNT(*) FROM information_schema.views WHERE table_schema = :source

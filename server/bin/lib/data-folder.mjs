@@ -1,11 +1,23 @@
 import { chmodSync, existsSync, mkdirSync, rmSync, writeFileSync } from 'node:fs';
 import { dataFolder, inData } from './paths.mjs';
-import { say } from './say.mjs';
+import { Halt, say } from './say.mjs';
 
 const made = ['mariadb', 'fakes', 'storage', 'demo-accounts.json', 'demo-begun', 'demo-done'];
 
 /** Makes the data folder with what the children expect to find in it; nobody else may look inside. */
 export function makeDataFolder() {
+  try {
+    makeFolders();
+  } catch (error) {
+    if (!['EACCES', 'EPERM', 'EROFS'].includes(error.code)) throw error;
+    throw new Halt(
+      `The data folder ${dataFolder} belongs to another user or cannot be written (${error.code}: ${error.path ?? ''}).\n` +
+        'Start as the user who made it, or give it to this one: chown -R.',
+    );
+  }
+}
+
+function makeFolders() {
   for (const folder of ['.', 'logs', 'fakes', 'storage']) {
     mkdirSync(inData(folder), { recursive: true, mode: 0o700 });
   }

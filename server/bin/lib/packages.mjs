@@ -7,7 +7,12 @@ import { runTool } from './tools.mjs';
 
 /** Runs `npm ci` unless node_modules holds what the lock file asks for. */
 export async function ensureNodeModules() {
-  const reason = whyPackagesAreStale();
+  const wanted = readJson(path.join(root, 'package-lock.json'))?.packages;
+  if (!wanted) throw new Halt('package-lock.json is missing or broken: take it from the repository again.');
+  const reason = whyPackagesAreStale(
+    wanted,
+    readJson(path.join(root, 'node_modules', '.package-lock.json'))?.packages,
+  );
   if (!reason) return;
   say(`Installing the packages of package-lock.json (${reason}) …`);
   if (!findProgram('npm')) throw new Halt('npm is missing: install Node 20 together with its npm.');
@@ -21,10 +26,7 @@ export async function ensureNodeModules() {
  * Compares what npm noted at the end of its last install with the lock file. By content and not by time: a checkout
  * touches files without changing them, and an install that was cut off leaves no note.
  */
-function whyPackagesAreStale() {
-  const wanted = readLock(path.join(root, 'package-lock.json'));
-  const installed = readLock(path.join(root, 'node_modules', '.package-lock.json'));
-  if (!wanted) throw new Halt('package-lock.json is missing or broken: take it from the repository again.');
+export function whyPackagesAreStale(wanted, installed) {
   if (!installed) return 'nothing is installed yet';
   for (const [name, entry] of Object.entries(wanted)) {
     if (name === '' || entry.link) continue;
@@ -33,8 +35,4 @@ function whyPackagesAreStale() {
     if (has && has.version !== entry.version) return `${name} is ${has.version}, not ${entry.version}`;
   }
   return undefined;
-}
-
-function readLock(file) {
-  return readJson(file)?.packages;
 }
