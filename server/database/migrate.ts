@@ -1,6 +1,6 @@
 import path from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
-import mariadb from 'mariadb';
+import mariadb, { type Connection } from 'mariadb';
 import type { QueryInterface } from 'sequelize';
 import { QueryTypes } from 'sequelize';
 import { SequelizeStorage, Umzug, type MigrationFn } from 'umzug';
@@ -39,7 +39,7 @@ const APPLICATION_HOSTS = ['localhost', '127.0.0.1', '%'];
 /** What the server answers to a grant for a user that it does not know at that host. */
 const UNKNOWN_USER_CODES = new Set(['ER_PASSWORD_NO_MATCH', 'ER_CANT_CREATE_USER_WITH_GRANT']);
 
-async function isUserKnown(connection: mariadb.Connection, grantee: string): Promise<boolean> {
+async function isUserKnown(connection: Connection, grantee: string): Promise<boolean> {
   try {
     await connection.query(`GRANT SELECT ON schema_migrations TO ${grantee}`);
     return true;

@@ -1,5 +1,6 @@
 import { randomBytes, timingSafeEqual } from 'node:crypto';
 import type { Request, RequestHandler } from 'express';
+import 'express-session';
 import { ForbiddenError } from '#server/app-error.ts';
 import { env } from '#server/env.ts';
 
