@@ -62,7 +62,7 @@ Certificate.init(
     number: { type: DataTypes.STRING(60), allowNull: false },
     issuedOn: { type: DataTypes.DATEONLY, allowNull: false },
     sampling: { type: DataTypes.STRING(32), allowNull: false },
-    itemMassValue: { type: DataTypes.DECIMAL(20, 6) },
+    itemMassValue: { type: DataTypes.STRING(24) },
     itemMassUnit: { type: DataTypes.STRING(8) },
     itemMassGrams: { type: DataTypes.DECIMAL(30, 15) },
     itemMark: { type: DataTypes.STRING(120) },

@@ -20,6 +20,8 @@ export class Lot extends Model<InferAttributes<Lot>, InferCreationAttributes<Lot
   declare state:
     'draft' | 'submitted' | 'returned' | 'open' | 'reserved' | 'sold' | 'paused' | 'closed' | 'withdrawn';
   declare draft: JsonValue;
+  /** Counts the saves of the draft alone, so that a photo added in between is no conflict. */
+  declare draftVersion: CreationOptional<number>;
   declare form: CreationOptional<
     'button' | 'bar' | 'grain' | 'karat_scrap' | 'plated_scrap' | 'e_scrap' | 'sweeps' | null
   >;
@@ -67,14 +69,16 @@ Lot.init(
     sellerId: { type: DataTypes.CHAR(36), allowNull: false },
     state: { type: DataTypes.STRING(32), allowNull: false },
     draft: { type: DataTypes.JSON, allowNull: false },
+    draftVersion: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
     form: { type: DataTypes.STRING(32) },
     title: { type: DataTypes.STRING(120) },
     description: { type: DataTypes.TEXT },
     region: { type: DataTypes.STRING(60), allowNull: false },
-    grossValue: { type: DataTypes.DECIMAL(20, 6) },
+    // As typed: the last digit typed is the default of the readability, so no digit may be added or lost.
+    grossValue: { type: DataTypes.STRING(24) },
     grossUnit: { type: DataTypes.STRING(8) },
     grossGrams: { type: DataTypes.DECIMAL(30, 15) },
-    readabilityValue: { type: DataTypes.DECIMAL(20, 6) },
+    readabilityValue: { type: DataTypes.STRING(24) },
     readabilityUnit: { type: DataTypes.STRING(8) },
     pricingBasis: { type: DataTypes.STRING(16), allowNull: false, defaultValue: 'outright' },
     settlesOn: { type: DataTypes.STRING(16), allowNull: false, defaultValue: 'stated' },
