@@ -1,6 +1,5 @@
-import { toGrams, type MassEntry } from '../mass.ts';
 import { lastDigitOf } from '../decimal.ts';
-import { GRAMS_PER_UNIT } from '../mass.ts';
+import { GRAMS_PER_UNIT, toGrams, type MassEntry } from '../mass.ts';
 
 /** How well a lot's assay is backed, best first. */
 export const EVIDENCE_GRADES = ['certified', 'examined', 'declared'] as const;

@@ -1,0 +1,284 @@
+import { IssueCollector, MeasureError, type MeasureIssue } from './domain-error.ts';
+import { dayOf, daysLater, isCalendarDay } from './calendar-day.ts';
+import {
+  DESCRIPTION_LENGTH_MAX,
+  LOT_OPEN_DAYS_MAX,
+  PRICE_MINOR_MAX,
+  PRICE_MINOR_MIN,
+  TITLE_LENGTH_MAX,
+} from './limits.ts';
+import { AMOUNT_MAX_MINOR, fromAmount, minorToAmount } from './money.ts';
+import type { MassEntry } from './mass.ts';
+import { parseCertificate, type ParsedCertificate } from './lot-certificate.ts';
+import { parseContents, readMass } from './lot-contents.ts';
+import { REFINED_FORMS, type LotDraft } from './schemas/lots.ts';
+import { measureLot } from './settlement/lot-measures.ts';
+import { refinedSheet } from './settlement/refined-sheet.ts';
+import type { ContentEntry, QuoteRef, RefinedSheetInput } from './settlement/sheet-types.ts';
+import { typedDecimal } from './typed-number.ts';
+
+/** A refined form. */
+export type RefinedForm = (typeof REFINED_FORMS)[number];
+
+/** One thing that stands between a draft and its submission; `pointer` is a JSON pointer into the draft. */
+export type LotProblem = { pointer: string; code: string; message: string };
+
+/** A draft that can be submitted, read: numbers in plain notation with the digits typed, sums in cents. */
+export type ParsedLot = {
+  form: RefinedForm;
+  title: string;
+  description: string;
+  gross: MassEntry;
+  readability: MassEntry | null;
+  contents: ContentEntry[];
+  priceMinor: bigint;
+  shippingMinor: bigint;
+  destinations: string[];
+  /** The last day on which the lot is open; null for as long as is allowed. */
+  closesOn: string | null;
+  certificate: ParsedCertificate;
+};
+
+/** Shortest title that says anything. */
+export const TITLE_LENGTH_MIN = 5;
+
+/**
+ * Everything that stands between a draft and its submission, at once; with none, the draft read. Pure: `now` is the
+ * moment that dates are held against. The same function speaks on the screen and on the server.
+ */
+export function checkLotDraft(
+  draft: LotDraft,
+  now: Date,
+): { problems: LotProblem[]; value: ParsedLot | null } {
+  const issues = new IssueCollector();
+  const form = issues.attempt(() => readForm(draft.form));
+  const title = issues.attempt(() => readTitle(draft.title));
+  const description = issues.attempt(() => readDescription(draft.description));
+  const measures = issues.attempt(() => readMeasures(draft));
+  const priceMinor = issues.attempt(() => readPrice(draft.price));
+  const shippingMinor = issues.attempt(() => readShipping(draft.shipping));
+  const destinations = issues.attempt(() => readDestinations(draft.destinations));
+  const closesOn = issues.attempt(() => ({ day: readClosingDay(draft.closesOn, now) }));
+  const paid = draft.contents.filter((content) => content.paidFor).map((content) => content.metal);
+  const certificate = issues.attempt(() => parseCertificate(draft.certificate, paid, now));
+  issues.attempt(() => readConfirmations(draft));
+  const problems = gathered(issues).map(({ field, code, message }) => ({ pointer: field, code, message }));
+  if (
+    problems.length > 0 ||
+    !form ||
+    title === undefined ||
+    description === undefined ||
+    !measures ||
+    priceMinor === undefined ||
+    shippingMinor === undefined ||
+    !destinations ||
+    !closesOn ||
+    !certificate
+  ) {
+    return { problems, value: null };
+  }
+  const terms = { priceMinor, shippingMinor, destinations, closesOn: closesOn.day };
+  return { problems, value: { form, title, description, ...measures, ...terms, certificate } };
+}
+
+function gathered(issues: IssueCollector): readonly MeasureIssue[] {
+  try {
+    issues.finish();
+    return [];
+  } catch (error) {
+    if (error instanceof MeasureError) return error.issues;
+    throw error;
+  }
+}
+
+function readForm(form: string): RefinedForm {
+  const found = REFINED_FORMS.find((known) => known === form);
+  if (found) return found;
+  throw new MeasureError('form-missing', '/form', 'Choose button, bar or grain.');
+}
+
+function readTitle(text: string): string {
+  const title = text.trim();
+  if (title.length < TITLE_LENGTH_MIN) {
+    throw new MeasureError(
+      'title-too-short',
+      '/title',
+      `Write a title of at least ${TITLE_LENGTH_MIN} letters.`,
+    );
+  }
+  if (title.length > TITLE_LENGTH_MAX) {
+    throw new MeasureError('title-too-long', '/title', `A title has at most ${TITLE_LENGTH_MAX} letters.`);
+  }
+  return title;
+}
+
+function readDescription(text: string): string {
+  if (text.length > DESCRIPTION_LENGTH_MAX) {
+    throw new MeasureError(
+      'description-too-long',
+      '/description',
+      `Write at most ${DESCRIPTION_LENGTH_MAX} letters.`,
+    );
+  }
+  return text.trim();
+}
+
+type Measured = { gross: MassEntry; readability: MassEntry | null; contents: ContentEntry[] };
+
+/** Reads the numbers as typed, then lets the engine judge them; what cannot be read is not judged as well. */
+function readMeasures(draft: LotDraft): Measured {
+  const issues = new IssueCollector();
+  const gross = issues.attempt(() => readMass(draft.gross, '/gross', 'Enter the gross mass.'));
+  const readability = issues.attempt(() => ({ entry: readReadability(draft) }));
+  const contents = issues.attempt(() => parseContents(draft.contents));
+  if (gross && readability && contents) {
+    issues.attempt(() => measureLot({ gross, readability: readability.entry, contents }));
+  } else {
+    // The readable part is judged too, so that one slip does not hide the others.
+    judgeParts(issues, gross, readability?.entry ?? null, contents);
+  }
+  if (draft.contents.length > 0 && !draft.contents.some((content) => content.paidFor)) {
+    issues.add('nothing-paid-for', '/contents', 'Mark at least one metal as paid for.');
+  }
+  issues.finish();
+  return { gross: gross!, readability: readability!.entry, contents: contents! };
+}
+
+function judgeParts(
+  issues: IssueCollector,
+  gross: MassEntry | undefined,
+  readability: MassEntry | null,
+  contents: ContentEntry[] | undefined,
+): void {
+  const standIn: MassEntry = { value: '1000', unit: 'kg' };
+  const pure: ContentEntry = {
+    metal: 'Au',
+    fineness: { value: '1000', unit: 'permille' },
+    uncertainty: null,
+    method: 'none',
+    paidFor: true,
+  };
+  issues.attempt(() => measureLot({ gross: gross ?? standIn, readability, contents: contents ?? [pure] }));
+}
+
+function readReadability(draft: LotDraft): MassEntry | null {
+  if (draft.readability.value.trim() === '') return null;
+  return readMass(draft.readability, '/readability', 'Enter the readability of the balance.');
+}
+
+function readPrice(text: string): bigint {
+  const { minor } = fromAmount(typedDecimal(text, '/price', 'Enter a price.'), '/price');
+  checkPrice(minor);
+  return minor;
+}
+
+/** Refuses a price outside the limits of the house. Throws MeasureError `price-too-low`, `price-too-high` at `/price`. */
+export function checkPrice(minor: bigint): void {
+  if (minor < PRICE_MINOR_MIN) {
+    throw new MeasureError(
+      'price-too-low',
+      '/price',
+      `The lowest price is US$ ${minorToAmount(PRICE_MINOR_MIN)}.`,
+    );
+  }
+  if (minor > PRICE_MINOR_MAX) {
+    throw new MeasureError(
+      'price-too-high',
+      '/price',
+      `The highest price is US$ ${minorToAmount(PRICE_MINOR_MAX)}.`,
+    );
+  }
+}
+
+function readShipping(text: string): bigint {
+  const missing = 'Enter the charge for the insured parcel; 0 if you bear it.';
+  const { minor } = fromAmount(typedDecimal(text, '/shipping', missing), '/shipping');
+  if (minor < 0n) throw new MeasureError('amount-negative', '/shipping', 'This sum is never below zero.');
+  if (minor > AMOUNT_MAX_MINOR / 100n) {
+    throw new MeasureError('too-large', '/shipping', 'No parcel costs as much as that.');
+  }
+  return minor;
+}
+
+function readDestinations(codes: readonly string[]): string[] {
+  const issues = new IssueCollector();
+  if (codes.length === 0) {
+    issues.add('destinations-missing', '/destinations', 'Choose at least one country that you ship to.');
+  }
+  codes.forEach((code, index) => {
+    if (!/^[A-Z]{2}$/.test(code)) {
+      issues.add('country-unknown', `/destinations/${index}`, 'Use two capital letters, such as US.');
+    } else if (codes.indexOf(code) !== index) {
+      issues.add('country-repeated', `/destinations/${index}`, `${code} is chosen twice.`);
+    }
+  });
+  issues.finish();
+  return [...codes];
+}
+
+function readClosingDay(text: string, now: Date): string | null {
+  const day = text.trim();
+  if (day === '') return null;
+  if (!isCalendarDay(day)) {
+    throw new MeasureError('date-invalid', '/closesOn', 'Write a date such as 2026-12-31.');
+  }
+  if (day <= dayOf(now)) {
+    throw new MeasureError('date-too-early', '/closesOn', 'Choose a day after today.');
+  }
+  if (day > dayOf(daysLater(now, LOT_OPEN_DAYS_MAX))) {
+    throw new MeasureError(
+      'date-too-late',
+      '/closesOn',
+      `A lot is open for at most ${LOT_OPEN_DAYS_MAX} days.`,
+    );
+  }
+  return day;
+}
+
+function readConfirmations(draft: LotDraft): void {
+  const issues = new IssueCollector();
+  if (!draft.confirmsCautions) {
+    issues.add('not-confirmed', '/confirmsCautions', 'Confirm that you have read the cautions.');
+  }
+  if (!draft.confirmsTitle) {
+    issues.add('not-confirmed', '/confirmsTitle', 'Confirm that the metal is yours to sell.');
+  }
+  issues.finish();
+}
+
+/** What the live sheet of a draft is made for; without it, a buyer's estimate. */
+export type DraftSheetFor = Pick<RefinedSheetInput, 'audience' | 'commission'>;
+
+/**
+ * Input of the estimated sheet of a draft that is still being typed: null until mass, one metal paid for and its quote
+ * can be read. A price or parcel that cannot be read yet is left out, so that the melt value already shows.
+ */
+export function draftSheetInput(
+  draft: LotDraft,
+  quotes: readonly QuoteRef[],
+  { audience, commission }: DraftSheetFor = { audience: 'buyer', commission: null },
+): RefinedSheetInput | null {
+  const measures = unlessRefused(() => readMeasures(draft));
+  if (!measures) return null;
+  const price = unlessRefused(() => minorToAmount(readPrice(draft.price)));
+  const shipping = price === null ? null : unlessRefused(() => minorToAmount(readShipping(draft.shipping)));
+  const input: RefinedSheetInput = {
+    ...measures,
+    quotes: [...quotes],
+    price: price === null ? null : { amount: price },
+    shipping: shipping === null ? null : { amount: shipping },
+    commission,
+    moment: 'estimated',
+    audience,
+  };
+  return unlessRefused(() => refinedSheet(input)) ? input : null;
+}
+
+function unlessRefused<T>(step: () => T): T | null {
+  try {
+    return step();
+  } catch (error) {
+    if (error instanceof MeasureError) return null;
+    throw error;
+  }
+}
