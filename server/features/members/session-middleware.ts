@@ -19,7 +19,7 @@ export function createSessionMiddleware(): { middleware: RequestHandler; close: 
     table: 'SessionRow',
     checkExpirationInterval: env.NODE_ENV === 'test' ? 0 : 15 * 60 * 1000,
     expiration: SESSION_IDLE_HOURS * 3_600_000,
-    extendDefaultFields: (defaults: Record<string, unknown>, data: { passport?: { user?: string } }) => ({
+    extendDefaultFields: (defaults, data: { passport?: { user?: string } }) => ({
       ...defaults,
       memberId: data.passport?.user ?? null,
     }),

@@ -41,7 +41,7 @@ function checkCredentials(req: Request, res: Response): Promise<Actor | null> {
 /** `logIn` makes a new session id, so that an id planted before sign-in is worth nothing after it. */
 function startSession(req: Request, actor: Actor): Promise<void> {
   return new Promise((resolve, reject) => {
-    req.logIn(actor, { keepSessionInfo: false }, (error: unknown) => {
+    req.logIn(actor, (error: unknown) => {
       if (error) return reject(error as Error);
       req.session.signedInAt = new Date().toISOString();
       resolve();
