@@ -17,6 +17,8 @@ export class Payment extends Model<InferAttributes<Payment>, InferCreationAttrib
   declare paymentIntentId: CreationOptional<string | null>;
   declare chargeId: CreationOptional<string | null>;
   declare balanceTransactionId: CreationOptional<string | null>;
+  /** Counts the sessions of this payment; part of the key under which one is made. */
+  declare attempt: CreationOptional<number>;
   declare amountMinor: bigint;
   declare feeMinor: CreationOptional<bigint | null>;
   declare currency: CreationOptional<string>;
@@ -36,6 +38,7 @@ Payment.init(
     paymentIntentId: { type: DataTypes.STRING(120) },
     chargeId: { type: DataTypes.STRING(120) },
     balanceTransactionId: { type: DataTypes.STRING(120) },
+    attempt: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
     amountMinor: minorColumn('amountMinor', { allowNull: false }),
     feeMinor: minorColumn('feeMinor', { allowNull: true }),
     currency: { type: DataTypes.CHAR(3), allowNull: false, defaultValue: 'USD' },

@@ -15,6 +15,8 @@ export class Payout extends Model<InferAttributes<Payout>, InferCreationAttribut
   declare providerAccountId: string;
   declare providerTransferId: CreationOptional<string | null>;
   declare providerPayoutId: CreationOptional<string | null>;
+  /** Counts the tries to reach the bank; a failed payout is sent anew under the next number. */
+  declare attempt: CreationOptional<number>;
   declare amountMinor: bigint;
   declare currency: CreationOptional<string>;
   declare state: 'due' | 'transferred' | 'sent' | 'paid' | 'failed';
@@ -32,6 +34,7 @@ Payout.init(
     providerAccountId: { type: DataTypes.STRING(64), allowNull: false },
     providerTransferId: { type: DataTypes.STRING(120) },
     providerPayoutId: { type: DataTypes.STRING(120) },
+    attempt: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
     amountMinor: minorColumn('amountMinor', { allowNull: false }),
     currency: { type: DataTypes.CHAR(3), allowNull: false, defaultValue: 'USD' },
     state: { type: DataTypes.STRING(32), allowNull: false },

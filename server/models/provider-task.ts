@@ -16,6 +16,9 @@ export class ProviderTask extends Model<
   declare dealId: string;
   declare kind: 'expire_session' | 'refund' | 'transfer' | 'payout' | 'register_parcel';
   declare idempotencyKey: string;
+  /** Which key of this task is in use at the provider, and since when: a burnt or aged one gives way to the next. */
+  declare keyVersion: CreationOptional<number>;
+  declare keySince: CreationOptional<Date | null>;
   declare state: 'due' | 'claimed' | 'done' | 'given_up';
   declare payload: JsonValue;
   declare providerObjectId: CreationOptional<string | null>;
@@ -36,6 +39,8 @@ ProviderTask.init(
     dealId: { type: DataTypes.CHAR(36), allowNull: false },
     kind: { type: DataTypes.STRING(32), allowNull: false },
     idempotencyKey: { type: DataTypes.STRING(255), allowNull: false },
+    keyVersion: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 1 },
+    keySince: { type: DataTypes.DATE(3) },
     state: { type: DataTypes.STRING(32), allowNull: false },
     payload: { type: DataTypes.JSON, allowNull: false },
     providerObjectId: { type: DataTypes.STRING(120) },

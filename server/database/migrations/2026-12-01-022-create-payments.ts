@@ -11,6 +11,7 @@ export const up: Migration = async ({ context }) => {
       payment_intent_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,
       charge_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,
       balance_transaction_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,
+      attempt INT NOT NULL DEFAULT 1,
       amount_minor BIGINT NOT NULL CHECK (amount_minor > 0),
       fee_minor BIGINT NULL CHECK (fee_minor >= 0),
       currency CHAR(3) NOT NULL DEFAULT 'USD' CHECK (currency = 'USD'),

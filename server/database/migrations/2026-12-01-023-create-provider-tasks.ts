@@ -7,6 +7,8 @@ export const up: Migration = async ({ context }) => {
       deal_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       kind VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (kind IN ('expire_session', 'refund', 'transfer', 'payout', 'register_parcel')),
       idempotency_key VARCHAR(255) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
+      key_version INT NOT NULL DEFAULT 1,
+      key_since DATETIME(3) NULL,
       state VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (state IN ('due', 'claimed', 'done', 'given_up')),
       payload JSON NOT NULL,
       provider_object_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,

@@ -9,6 +9,7 @@ export const up: Migration = async ({ context }) => {
       provider_account_id VARCHAR(64) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       provider_transfer_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,
       provider_payout_id VARCHAR(120) CHARACTER SET ascii COLLATE ascii_bin NULL,
+      attempt INT NOT NULL DEFAULT 1,
       amount_minor BIGINT NOT NULL CHECK (amount_minor >= 0),
       currency CHAR(3) NOT NULL DEFAULT 'USD' CHECK (currency = 'USD'),
       state VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (state IN ('due', 'transferred', 'sent', 'paid', 'failed')),

@@ -34,6 +34,10 @@ export const createSessionInput = {
     .array(z.enum(['card']))
     .min(1)
     .optional(),
+  allowed_payment_method_types: z
+    .array(z.enum(['card']))
+    .min(1)
+    .optional(),
   submit_type: z.enum(['auto', 'pay', 'book', 'donate']).optional(),
   allow_promotion_codes: flag.optional(),
 };
