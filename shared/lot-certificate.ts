@@ -1,6 +1,6 @@
 import { isAssayMethodKey, type AssayMethodKey } from './assay/methods.ts';
 import { dayOf, isCalendarDay } from './calendar-day.ts';
-import { IssueCollector, MeasureError } from './domain-error.ts';
+import { invariant, IssueCollector, MeasureError } from './domain-error.ts';
 import { assertTotalWithinWhole, toFraction, type FinenessEntry } from './fineness.ts';
 import { readElement, readFineness, readMass } from './lot-contents.ts';
 import { toGrams, type MassEntry } from './mass.ts';
@@ -56,17 +56,21 @@ export function parseCertificate(
   const item = issues.attempt(() => readItem(draft));
   const results = issues.attempt(() => readResults(draft, paid));
   issues.finish();
+  invariant(
+    draft.fileId !== null && dates && sampling && item && results,
+    'what cannot be read is always reported',
+  );
   return {
-    fileId: draft.fileId!,
+    fileId: draft.fileId,
     laboratoryId: draft.laboratoryId,
     laboratoryName: draft.laboratoryName.trim(),
     number: draft.number.trim(),
-    ...dates!,
-    sampling: sampling!,
+    ...dates,
+    sampling,
     itemDescription: draft.itemDescription.trim(),
-    ...item!,
+    ...item,
     authorisedBy: draft.authorisedBy.trim(),
-    results: results!,
+    results,
   };
 }
 
@@ -85,7 +89,8 @@ function readDates(draft: DraftCertificate, now: Date): Dates {
   const receivedOn = optional(draft.receivedOn, `${AT}/receivedOn`);
   const testedOn = optional(draft.testedOn, `${AT}/testedOn`);
   issues.finish();
-  return { issuedOn: issuedOn!, receivedOn: receivedOn!.day, testedOn: testedOn!.day };
+  invariant(issuedOn !== undefined && receivedOn && testedOn, 'what cannot be read is always reported');
+  return { issuedOn, receivedOn: receivedOn.day, testedOn: testedOn.day };
 }
 
 function readPastDay(text: string, field: string, now: Date): string {
@@ -165,10 +170,11 @@ function readResult(draft: DraftCertificate, index: number): ParsedResult {
     issues.add('method-unknown', `${field}/method`, 'Choose one of the methods listed.');
   }
   issues.finish();
+  invariant(element && fineness && uncertainty, 'what cannot be read is always reported');
   return {
-    element: element!,
-    fineness: fineness!,
-    uncertainty: uncertainty!.entry,
+    element,
+    fineness,
+    uncertainty: uncertainty.entry,
     method: isAssayMethodKey(method) ? method : 'none',
   };
 }

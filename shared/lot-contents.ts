@@ -1,5 +1,5 @@
 import { isAssayMethodKey } from './assay/methods.ts';
-import { IssueCollector, MeasureError } from './domain-error.ts';
+import { invariant, IssueCollector, MeasureError } from './domain-error.ts';
 import { isFinenessUnit, type FinenessEntry } from './fineness.ts';
 import { isMassUnit, MASS_UNITS, type MassEntry } from './mass.ts';
 import { isMetal, isOtherElement, type Metal, type OtherElement } from './metals.ts';
@@ -28,7 +28,8 @@ export function readMass(typed: TypedQuantity, field: string, missing: string): 
     return typed.unit;
   });
   issues.finish();
-  return { value: value!, unit: unit! };
+  invariant(value !== undefined && unit, 'what cannot be read is always reported');
+  return { value, unit };
 }
 
 /**
@@ -48,7 +49,8 @@ export function readFineness(typed: TypedQuantity, field: string, missing: strin
     return typed.unit;
   });
   issues.finish();
-  return { value: value!, unit: unit! };
+  invariant(value !== undefined && unit, 'what cannot be read is always reported');
+  return { value, unit };
 }
 
 /** Reads an element's symbol. Throws MeasureError `metal-unknown` at `field`. */
@@ -57,18 +59,8 @@ export function readElement(symbol: string, field: string): Metal | OtherElement
   throw new MeasureError('metal-unknown', field, 'Choose a metal from the list.');
 }
 
-/** Reads the rows of an assay as typed; every refusal is told at once. Bounds and totals are left to `measureLot`. */
-export function parseContents(rows: readonly DraftContent[]): ContentEntry[] {
-  const issues = new IssueCollector();
-  const contents = rows.flatMap((row, index) => {
-    const content = issues.attempt(() => parseContent(row, `/contents/${index}`));
-    return content ? [content] : [];
-  });
-  issues.finish();
-  return contents;
-}
-
-function parseContent(row: DraftContent, field: string): ContentEntry {
+/** Reads one row of an assay as typed; every refusal is told at once. Bounds and totals are left to `measureLot`. */
+export function readContent(row: DraftContent, field: string): ContentEntry {
   const issues = new IssueCollector();
   const metal = issues.attempt(() => readElement(row.metal, `${field}/metal`));
   const fineness = issues.attempt(() =>
@@ -85,10 +77,11 @@ function parseContent(row: DraftContent, field: string): ContentEntry {
     issues.add('method-unknown', `${field}/method`, 'Choose one of the methods listed.');
   }
   issues.finish();
+  invariant(metal && fineness && uncertainty, 'what cannot be read is always reported');
   return {
-    metal: metal!,
-    fineness: fineness!,
-    uncertainty: uncertainty!.entry,
+    metal,
+    fineness,
+    uncertainty: uncertainty.entry,
     method: isAssayMethodKey(method) ? method : 'none',
     paidFor: row.paidFor,
   };

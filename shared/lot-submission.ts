@@ -1,4 +1,4 @@
-import { IssueCollector, MeasureError, type MeasureIssue } from './domain-error.ts';
+import { invariant, IssueCollector, MeasureError, type MeasureIssue } from './domain-error.ts';
 import { dayOf, daysLater, isCalendarDay } from './calendar-day.ts';
 import {
   DESCRIPTION_LENGTH_MAX,
@@ -10,7 +10,7 @@ import {
 import { AMOUNT_MAX_MINOR, fromAmount, minorToAmount } from './money.ts';
 import type { MassEntry } from './mass.ts';
 import { parseCertificate, type ParsedCertificate } from './lot-certificate.ts';
-import { parseContents, readMass } from './lot-contents.ts';
+import { readContent, readMass } from './lot-contents.ts';
 import { REFINED_FORMS, type LotDraft } from './schemas/lots.ts';
 import { measureLot } from './settlement/lot-measures.ts';
 import { refinedSheet } from './settlement/refined-sheet.ts';
@@ -125,40 +125,61 @@ function readDescription(text: string): string {
 
 type Measured = { gross: MassEntry; readability: MassEntry | null; contents: ContentEntry[] };
 
-/** Reads the numbers as typed, then lets the engine judge them; what cannot be read is not judged as well. */
+/** Stands in for what cannot be read, so that the rest is judged all the same. */
+const HEAVY: MassEntry = { value: '1000', unit: 'kg' };
+const PURE: ContentEntry = {
+  metal: 'Au',
+  fineness: { value: '1000', unit: 'permille' },
+  uncertainty: null,
+  method: 'none',
+  paidFor: true,
+};
+
+/** Reads the numbers as typed, then lets the engine judge all that could be read: one slip does not hide another. */
 function readMeasures(draft: LotDraft): Measured {
   const issues = new IssueCollector();
   const gross = issues.attempt(() => readMass(draft.gross, '/gross', 'Enter the gross mass.'));
   const readability = issues.attempt(() => ({ entry: readReadability(draft) }));
-  const contents = issues.attempt(() => parseContents(draft.contents));
-  if (gross && readability && contents) {
-    issues.attempt(() => measureLot({ gross, readability: readability.entry, contents }));
-  } else {
-    // The readable part is judged too, so that one slip does not hide the others.
-    judgeParts(issues, gross, readability?.entry ?? null, contents);
-  }
+  const rows = draft.contents.flatMap((row, index) => {
+    const entry = issues.attempt(() => readContent(row, `/contents/${index}`));
+    return entry ? [{ entry, index }] : [];
+  });
+  const contents = rows.map(({ entry }) => entry);
+  const isNothingReadable = draft.contents.length > 0 && rows.length === 0;
+  issues.attempt(() =>
+    withRowsOf(
+      rows.map(({ index }) => index),
+      () =>
+        measureLot({
+          gross: gross ?? HEAVY,
+          readability: readability?.entry ?? null,
+          contents: isNothingReadable ? [PURE] : contents,
+        }),
+    ),
+  );
   if (draft.contents.length > 0 && !draft.contents.some((content) => content.paidFor)) {
     issues.add('nothing-paid-for', '/contents', 'Mark at least one metal as paid for.');
   }
   issues.finish();
-  return { gross: gross!, readability: readability!.entry, contents: contents! };
+  invariant(gross && readability, 'what cannot be read is always reported');
+  return { gross, readability: readability.entry, contents };
 }
 
-function judgeParts(
-  issues: IssueCollector,
-  gross: MassEntry | undefined,
-  readability: MassEntry | null,
-  contents: ContentEntry[] | undefined,
-): void {
-  const standIn: MassEntry = { value: '1000', unit: 'kg' };
-  const pure: ContentEntry = {
-    metal: 'Au',
-    fineness: { value: '1000', unit: 'permille' },
-    uncertainty: null,
-    method: 'none',
-    paidFor: true,
-  };
-  issues.attempt(() => measureLot({ gross: gross ?? standIn, readability, contents: contents ?? [pure] }));
+/** The engine counts the rows that it was given; a pointer counts the rows of the draft. */
+function withRowsOf<T>(indexes: readonly number[], step: () => T): T {
+  try {
+    return step();
+  } catch (error) {
+    if (!(error instanceof MeasureError)) throw error;
+    const issues = error.issues.map((issue) => ({
+      ...issue,
+      field: issue.field.replace(/^\/contents\/(\d+)/, (_, at: string) => {
+        const row = indexes.find((__, position) => String(position) === at);
+        return `/contents/${row ?? at}`;
+      }),
+    }));
+    throw new MeasureError(error.code, issues[0]?.field ?? error.field, error.message, issues);
+  }
 }
 
 function readReadability(draft: LotDraft): MassEntry | null {
