@@ -1,12 +1,12 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useRef, useState } from 'react';
 import { Link, useLocation, useNavigate } from 'react-router-dom';
+import type { MemberAnswer } from '#shared/schemas/session.ts';
 import { apiSend, rememberCsrfToken } from '../lib/api-client.ts';
 import { paths } from '../lib/paths.ts';
-import type { SessionMember } from '../lib/session.ts';
 import { isRouted } from './routes.tsx';
 
-type AccountMenuProps = { member: SessionMember | null };
+type AccountMenuProps = { member: MemberAnswer | null };
 
 export function AccountMenu({ member }: AccountMenuProps) {
   if (member) return <MemberMenu member={member} />;
@@ -32,7 +32,7 @@ function useSignOut() {
   });
 }
 
-function MemberMenu({ member }: { member: SessionMember }) {
+function MemberMenu({ member }: { member: MemberAnswer }) {
   const [isOpen, setIsOpen] = useState(false);
   const root = useRef<HTMLDivElement>(null);
   const toggle = useRef<HTMLButtonElement>(null);

@@ -28,14 +28,14 @@ export function RootLayout() {
   const isLoading = useNavigation().state === 'loading';
   const main = useFocusOnNewPage();
   const reader = useMemo(
-    () => (member ? { timeZone: member.timeZone, massUnit: member.massUnit } : visitorReader),
+    () => (member ? { timeZone: member.timeZone, weightUnit: member.weightUnit } : visitorReader),
     [member],
   );
   return (
     <ReaderContext value={reader}>
       <a
         href="#main"
-        className="no-print fixed left-3 top-2 z-50 -translate-y-16 rounded-box bg-verdigris px-4 py-2 font-semibold text-sheet focus:translate-y-0"
+        className="sr-only rounded-box bg-verdigris font-semibold text-sheet focus:not-sr-only focus:fixed focus:left-3 focus:top-2 focus:z-50 focus:px-4 focus:py-2"
       >
         Skip to the page
       </a>

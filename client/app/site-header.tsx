@@ -1,25 +1,25 @@
 import { Link, NavLink } from 'react-router-dom';
+import type { MemberAnswer } from '#shared/schemas/session.ts';
 import { cx } from '../lib/cx.ts';
 import { paths } from '../lib/paths.ts';
-import { isStaff, type SessionMember } from '../lib/session.ts';
 import { AccountMenu } from './account-menu.tsx';
 import { HeaderQuote } from './header-quote.tsx';
 import { Mark } from './mark.tsx';
 import { isRouted } from './routes.tsx';
 import { ThemeSwitch } from './theme-switch.tsx';
 
-type Room = { to: string; name: string; isOpenTo: (member: SessionMember | null) => boolean };
+type Room = { to: string; name: string; isOpenTo: (member: MemberAnswer | null) => boolean };
 
 const everyone = () => true;
 const rooms: Room[] = [
   { to: paths.register(), name: 'Market', isOpenTo: everyone },
   { to: paths.deals(), name: 'Deals', isOpenTo: (member) => member !== null },
-  { to: paths.desk(), name: 'Desk', isOpenTo: isStaff },
+  { to: paths.desk(), name: 'Desk', isOpenTo: (member) => member?.can.useDesk ?? false },
   { to: paths.worth(), name: 'What is it worth?', isOpenTo: everyone },
   { to: paths.methods(), name: 'Methods', isOpenTo: everyone },
 ];
 
-type SiteHeaderProps = { member: SessionMember | null };
+type SiteHeaderProps = { member: MemberAnswer | null };
 
 export function SiteHeader({ member }: SiteHeaderProps) {
   const open = rooms.filter((room) => isRouted(room.to) && room.isOpenTo(member));

@@ -1,7 +1,7 @@
 import { MASS_UNIT_LABELS, type MassEntry } from '#shared/mass.ts';
 import { cx } from '../../lib/cx.ts';
 import { useReader } from '../../lib/reader-context.ts';
-import { massIn, massUnitsFor } from './mass-conversion.ts';
+import { massIn, readingUnits } from './mass-conversion.ts';
 import { Quantity } from './quantity.tsx';
 
 type MassProps = {
@@ -12,7 +12,8 @@ type MassProps = {
 
 /** A mass in the reader's unit, and beside it in the others. */
 export function Mass({ entry, others = false, className }: MassProps) {
-  const [first = 'g', ...rest] = massUnitsFor(useReader().massUnit);
+  const first = useReader().weightUnit;
+  const rest = readingUnits(first).slice(1);
   return (
     <span className={cx('inline-flex flex-wrap items-baseline gap-x-3', className)}>
       <Quantity value={massIn(entry, first)} unit={MASS_UNIT_LABELS[first]} />

@@ -83,12 +83,13 @@ export type PlacedLabel = LabelRequest & {
 const GLYPH_WIDTH = 6.7;
 const GAP = 10;
 const LANES_MOST = 6;
+const SEARCH_STEPS_MOST = 20_000;
 
 /** Whether two labels, or the leader of one and the text of the other, would touch. */
 function clash(a: PlacedLabel, b: PlacedLabel): boolean {
   if (a.lane === b.lane) return a.left < b.right + GAP && b.left < a.right + GAP;
   const [upper, lower] = a.lane > b.lane ? [a, b] : [b, a];
-  return upper.x > lower.left - 3 && upper.x < lower.right + 3;
+  return upper.x > lower.left - 4 && upper.x < lower.right + 6;
 }
 
 function candidate(request: LabelRequest, lane: number, anchor: 'start' | 'end'): PlacedLabel {
@@ -97,19 +98,41 @@ function candidate(request: LabelRequest, lane: number, anchor: 'start' | 'end')
   return { ...request, lane, anchor, left, right: left + textWidth };
 }
 
-/** Gives every label the lowest lane in which neither its text nor its leader touches another. */
-export function placeLabels(requests: LabelRequest[], width: number): PlacedLabel[] {
-  const placed: PlacedLabel[] = [];
-  for (const request of [...requests].sort((a, b) => b.x - a.x)) {
-    const options: PlacedLabel[] = [];
-    for (let lane = 0; lane < LANES_MOST; lane += 1) {
-      options.push(candidate(request, lane, 'start'), candidate(request, lane, 'end'));
-    }
-    const fitting = options.filter((option) => option.left >= 0 && option.right <= width);
-    const free = fitting.find((option) => !placed.some((other) => clash(option, other)));
-    placed.push(
-      free ?? fitting.at(-1) ?? candidate(request, LANES_MOST - 1, request.x > width / 2 ? 'end' : 'start'),
-    );
+/** Every place a label could take, the lowest first; what would leave the drawing is left out. */
+function optionsFor(request: LabelRequest, width: number): PlacedLabel[] {
+  const options: PlacedLabel[] = [];
+  for (let lane = 0; lane < LANES_MOST; lane += 1) {
+    options.push(candidate(request, lane, 'start'), candidate(request, lane, 'end'));
   }
-  return placed;
+  const fitting = options.filter((option) => option.left >= 0 && option.right <= width);
+  return fitting.length > 0 ? fitting : options;
+}
+
+const laneCost = (label: PlacedLabel) => label.lane * label.lane + (label.anchor === 'end' ? 0.1 : 0);
+
+/**
+ * Stacks the labels in lanes so that neither text nor leader of one touches another, as low as can be: a search over
+ * all places, cut off where it cannot better what was found. Where there is no such way, labels may touch.
+ */
+export function placeLabels(requests: LabelRequest[], width: number): PlacedLabel[] {
+  const choices = requests.map((request) => optionsFor(request, width));
+  let best = choices.map((options, index) => options[Math.min(options.length - 1, index * 2)] as PlacedLabel);
+  let bestCost = Infinity;
+  let stepsLeft = SEARCH_STEPS_MOST;
+  const search = (placed: PlacedLabel[], cost: number) => {
+    const options = choices[placed.length];
+    if (!options) {
+      best = placed;
+      bestCost = cost;
+      return;
+    }
+    for (const option of options) {
+      const next = cost + laneCost(option);
+      stepsLeft -= 1;
+      if (next >= bestCost || stepsLeft < 0) return;
+      if (!placed.some((other) => clash(option, other))) search([...placed, option], next);
+    }
+  };
+  search([], 0);
+  return best;
 }

@@ -60,7 +60,7 @@ export function Ruler({ ticks, scale, width, lineY, size, isEmpty }: RulerProps)
             y2={lineY + (isMajor ? major : minor)}
             className="stroke-line"
           />
-          {isLarge && isMajor && Math.abs(scale.x(percent) - meltX) > 44 && (
+          {isLarge && isMajor && isFreeOf(meltX, scale.x(percent), width) && (
             <text x={scale.x(percent)} y={lineY + 27} className="fill-ink-2">
               {formatPercent(percent.toString())}
             </text>
@@ -80,6 +80,11 @@ export function Ruler({ ticks, scale, width, lineY, size, isEmpty }: RulerProps)
       </text>
     </g>
   );
+}
+
+/** A tick keeps its figure only where that neither runs into the mark of melt nor over the edge. */
+function isFreeOf(meltX: number, x: number, width: number): boolean {
+  return Math.abs(x - meltX) > 48 && x > 18 && x < width - 18;
 }
 
 /** A label with its leader down to what it names. */

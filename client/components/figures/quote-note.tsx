@@ -1,20 +1,15 @@
 import { Link } from 'react-router-dom';
 import { formatAge, formatClock, formatDeadline } from '../../lib/format.ts';
 import { paths } from '../../lib/paths.ts';
+import type { QuoteState } from '../../lib/quotes.ts';
 import { useReader } from '../../lib/reader-context.ts';
 import { useNow } from '../../lib/use-now.ts';
-
-export type QuoteState =
-  | { state: 'fresh'; at: string }
-  /** Nothing recent enough was accepted: nothing is priced. */
-  | { state: 'stale'; at: string | null }
-  /** The market is shut; prices wait. */
-  | { state: 'closed'; at: string | null; opensAt: string | null };
 
 /** 'quote 14:02, 40 s', or plainly that there is none. */
 export function quoteText(quote: QuoteState, timeZone: string, nowMs: number): string {
   if (quote.state === 'fresh')
     return `quote ${formatClock(quote.at, timeZone)}, ${formatAge(quote.at, nowMs)}`;
+  if (quote.state === 'partly') return `some quotes stale, others ${formatClock(quote.at, timeZone)}`;
   if (quote.state === 'closed') {
     if (quote.opensAt)
       return `market closed until ${formatDeadline(quote.opensAt, timeZone, nowMs).split(' (')[0]}`;

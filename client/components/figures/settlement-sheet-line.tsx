@@ -10,7 +10,8 @@ type SettlementSheetLineProps = { line: SheetLine; isOpen: boolean; remark: Reac
 function rowClass(kind: SheetLine['kind']): string {
   if (kind === 'total')
     return 'border-b-4 border-t border-double border-b-ink border-t-ink text-lead font-semibold [border-top-style:solid]';
-  if (kind === 'sum' || kind === 'price') return 'border-t border-ink font-medium';
+  if (kind === 'sum') return 'border-t border-ink font-medium';
+  if (kind === 'price') return 'border-t border-rule font-medium';
   return 'border-t border-rule';
 }
 
@@ -67,7 +68,7 @@ function Working({ line, isOpen, children }: WorkingProps) {
     <details open={open} onToggle={(event) => setOpen(event.currentTarget.open)} className="group">
       <summary
         title="Show the working"
-        className="relative list-none pl-4 before:absolute before:left-0 before:font-mono before:text-ink-2 before:content-['+'] group-open:before:content-['–'] hover:underline hover:decoration-1 hover:underline-offset-4 [&::-webkit-details-marker]:hidden"
+        className="relative min-h-6 list-none pl-4 before:absolute before:left-0 before:font-mono before:text-ink-2 before:content-['+'] group-open:before:content-['–'] hover:underline hover:decoration-1 hover:underline-offset-4 [&::-webkit-details-marker]:hidden"
       >
         {children}
         <span className="sr-only">, show the working</span>

@@ -32,7 +32,7 @@ export function SettlementSheetView({ sheet, title = 'Settlement sheet' }: Settl
           look="quiet"
           aria-pressed={allOpen}
           onClick={() => setAllOpen(!allOpen)}
-          className="no-print -mx-2 min-h-8 py-1 text-note"
+          className="no-print -ml-2 min-h-8 text-note"
         >
           {allOpen ? 'Close every working' : 'Open every working'}
         </Button>

@@ -23,8 +23,8 @@ export function SpecimenDrawing({ form, metal = 'Au', label, className }: Specim
       <MetalPattern id={id} metal={metal} />
       <Shape hatch={`url(#${id})`} />
       <text
-        x="114"
-        y="84"
+        x="116"
+        y="86"
         textAnchor="end"
         className="font-sans text-[9px] font-semibold"
         fill="currentColor"

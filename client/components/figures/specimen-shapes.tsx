@@ -56,15 +56,15 @@ const grains: [x: number, y: number, r: number][] = [
   [89, 65, 5.5],
   [97, 68, 4.5],
   [17, 71, 4],
-  [104, 73, 3.5],
 ];
 
 function GrainShape({ hatch }: ShapeProps) {
   return (
     <>
-      {grains.map(([x, y, r]) => (
+      {grains.map(([x, y, r], index) => (
         <g key={`${x}-${y}`}>
           <circle cx={x} cy={y} r={r} fill={body} />
+          {index % 3 === 0 && <circle cx={x} cy={y} r={r} fill={hatch} />}
           <path
             d={`M${x} ${y + r}a${r} ${r} 0 0 0 ${r}-${r}c-.6 2.5-2.5 4.4-${r} ${r}z`}
             fill={hatch}

@@ -5,13 +5,13 @@ import { cx } from '../../lib/cx.ts';
 export type ButtonLook = 'main' | 'second' | 'danger' | 'quiet';
 
 const base =
-  'inline-flex min-h-10 items-center justify-center gap-2 rounded-box border px-4 py-2 text-center font-semibold ' +
-  'leading-snug disabled:cursor-not-allowed aria-disabled:cursor-not-allowed';
+  'inline-flex min-h-10 items-center justify-center gap-2 rounded-box border py-2 text-center leading-snug ' +
+  ' disabled:cursor-not-allowed aria-disabled:cursor-not-allowed';
 
 const looks: Record<ButtonLook, string> = {
-  main: 'border-verdigris bg-verdigris text-sheet hover:underline underline-offset-4',
-  second: 'border-verdigris text-verdigris hover:bg-wash',
-  danger: 'border-litharge bg-litharge text-sheet hover:underline underline-offset-4',
+  main: 'border-verdigris bg-verdigris px-4 font-semibold text-sheet hover:underline underline-offset-4',
+  second: 'border-verdigris px-4 font-semibold text-verdigris hover:bg-wash',
+  danger: 'border-litharge bg-litharge px-4 font-semibold text-sheet hover:underline underline-offset-4',
   quiet:
     'border-transparent px-2 font-medium text-ink underline decoration-1 underline-offset-4 hover:decoration-2',
 };

@@ -35,7 +35,7 @@ export function ErrorSummary({ items, attempt = 0, title }: ErrorSummaryProps) {
     <div ref={box} tabIndex={-1} className="mb-6 rounded-box border-2 border-litharge bg-sheet p-4">
       <div role="alert">
         <h2 className="text-lead font-semibold">{heading}</h2>
-        <ul className="mt-2 flex list-disc flex-col gap-1 pl-5">
+        <ul className="mt-2 flex flex-col gap-1">
           {items.map((item) => (
             <li key={`${item.fieldId}:${item.message}`}>
               {item.fieldId === null ? (
@@ -44,7 +44,7 @@ export function ErrorSummary({ items, attempt = 0, title }: ErrorSummaryProps) {
                 <a
                   href={`#${item.fieldId}`}
                   onClick={(event) => goToField(event, item.fieldId ?? '')}
-                  className="inline-block py-0.5 font-medium text-litharge underline"
+                  className="block py-0.5 font-medium text-litharge underline"
                 >
                   {item.message}
                 </a>

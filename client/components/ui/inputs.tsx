@@ -5,6 +5,13 @@ const box =
   'min-h-10 w-full min-w-0 rounded-box border border-line bg-sheet px-3 py-2 text-ink ' +
   'aria-invalid:border-2 aria-invalid:border-litharge disabled:border-dashed disabled:text-ink-2 read-only:bg-paper';
 
+const tick =
+  'relative mt-px size-6 shrink-0 appearance-none border border-line bg-sheet checked:border-verdigris ' +
+  'checked:bg-verdigris before:absolute before:hidden before:bg-sheet checked:before:block disabled:border-dashed';
+const boxTick =
+  'rounded-box before:inset-1 before:[clip-path:polygon(12%_52%,0_64%,38%_98%,100%_18%,86%_6%,37%_74%)]';
+const dotTick = 'rounded-[50%] before:inset-[7px] before:rounded-[50%]';
+
 export function TextInput({ className, type = 'text', ...rest }: ComponentProps<'input'>) {
   return <input {...rest} type={type} className={cx(box, className)} />;
 }
@@ -53,13 +60,7 @@ export function Checkbox({
   const described = [describedBy, hintId].filter(Boolean).join(' ') || undefined;
   return (
     <div className={cx('flex gap-3', className)}>
-      <input
-        {...rest}
-        id={id}
-        type="checkbox"
-        aria-describedby={described}
-        className="mt-px size-6 shrink-0 accent-verdigris"
-      />
+      <input {...rest} id={id} type="checkbox" aria-describedby={described} className={cx(tick, boxTick)} />
       <div>
         <label htmlFor={id}>{label}</label>
         {hint && (
@@ -94,7 +95,7 @@ export function RadioGroup({ id, options, value, inline = false, ...rest }: Radi
             type="radio"
             value={option.value}
             aria-describedby={option.hint ? `${id}-${option.value}-note` : undefined}
-            className="mt-px size-6 shrink-0 accent-verdigris"
+            className={cx(tick, dotTick)}
           />
           <div>
             <label htmlFor={`${id}-${option.value}`}>{option.label}</label>
