@@ -20,7 +20,7 @@ export const up: Migration = async ({ context }) => {
       report_fields JSON NOT NULL,
       sha256 CHAR(64) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       live_key VARCHAR(200) NULL,
-      live_sha256 CHAR(64) CHARACTER SET ascii COLLATE ascii_bin AS (IF(live_key IS NULL, NULL, sha256)) STORED,
+      live_sha256 CHAR(64) CHARACTER SET ascii COLLATE ascii_bin AS (IF(live_key IS NULL, NULL, RTRIM(sha256))) STORED,
       claimed_by_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NULL,
       claimed_at DATETIME(3) NULL,
       decided_by_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NULL,
