@@ -86,6 +86,12 @@ export function createChildren({ onUnexpectedEnd }) {
   return { start, stop, stopAll, forceAll };
 }
 
+/** The first and the last lines of a short-lived child: an error begins with its message and may go on for pages. */
+export function logEnds(child) {
+  const lines = logTail(child, Infinity).split('\n');
+  return lines.length <= 40 ? lines.join('\n') : [...lines.slice(0, 25), '…', ...lines.slice(-12)].join('\n');
+}
+
 /** The last lines a child wrote. */
 export function logTail(child, lines = 25) {
   try {

@@ -1,6 +1,6 @@
 import { existsSync } from 'node:fs';
 import path from 'node:path';
-import { createChildren, logTail } from './children.mjs';
+import { createChildren, logEnds, logTail } from './children.mjs';
 import { forgetWithoutDatabase, hasDemo, makeDemoOnce } from './data-folder.mjs';
 import { addresses, fakeProcesses, ownerEnvironment, productEnvironment } from './environment.mjs';
 import { installDatabase, serverCommand, waitForDatabase, writeInitFile } from './mariadb.mjs';
@@ -46,7 +46,9 @@ export async function createProduct({ mode, onUnexpectedEnd, onOutput }) {
     const { code, error } = await child.ended;
     await children.stop(child);
     if (code !== 0) {
-      throw new Halt(`${name} did not work (${error?.message ?? `exit ${code}`}):\n${logTail(child, 40)}`);
+      throw new Halt(
+        `${name} did not work (${error?.message ?? `exit ${code}`}):\n${logEnds(child)}\n\nWhole log: ${child.logFile}`,
+      );
     }
     return child;
   }
