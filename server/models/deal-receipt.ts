@@ -22,7 +22,7 @@ DealReceipt.init(
   {
     id: { type: DataTypes.CHAR(36), primaryKey: true, allowNull: false },
     dealId: { type: DataTypes.CHAR(36), allowNull: false },
-    massValue: { type: DataTypes.DECIMAL(20, 6), allowNull: false },
+    massValue: { type: DataTypes.STRING(24), allowNull: false },
     massUnit: { type: DataTypes.STRING(8), allowNull: false },
     massGrams: { type: DataTypes.DECIMAL(30, 15), allowNull: false },
     photoFileId: { type: DataTypes.CHAR(36) },

@@ -5,7 +5,7 @@ export const up: Migration = async ({ context }) => {
     CREATE TABLE deal_receipts (
       id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL PRIMARY KEY,
       deal_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
-      mass_value DECIMAL(20,6) NOT NULL CHECK (mass_value > 0),
+      mass_value VARCHAR(24) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       mass_unit VARCHAR(8) NOT NULL,
       mass_grams DECIMAL(30,15) NOT NULL CHECK (mass_grams > 0),
       photo_file_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NULL,

@@ -86,6 +86,11 @@ export async function moveDeal(
   return deal;
 }
 
+/** Writes the first event of a deal that has just been made. */
+export async function recordAgreement(deal: Deal, act: DealAct, unit: Unit): Promise<void> {
+  await writeEvent(deal, act, { fromState: null, toState: deal.state }, unit);
+}
+
 /** Writes an event that leaves the state as it is. The caller holds the deal's lock. */
 export async function recordDealEvent(
   deal: Deal,

@@ -1,0 +1,147 @@
+import { Op, UniqueConstraintError } from 'sequelize';
+import { MeasureError } from '#shared/domain-error.ts';
+import { fromAmount } from '#shared/money.ts';
+import type { PurchaseRequest } from '#shared/schemas/deals.ts';
+import { commissionFor } from '#shared/settlement/commission.ts';
+import { dec, plain } from '#shared/decimal.ts';
+import { AppError, ConflictError, ForbiddenError, InvalidError, NotFoundError, invariant } from '#server/app-error.ts';
+import { newCode, newId } from '#server/database/ids.ts';
+import type { Unit } from '#server/database/transaction.ts';
+import { openDealAccounts, openMemberAccounts } from '#server/features/ledger/open-accounts.ts';
+import { moveLot } from '#server/features/lots/move-lot.ts';
+import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
+import { Deal } from '#server/models/deal.ts';
+import { FeeSchedule } from '#server/models/fee-schedule.ts';
+import { Lot } from '#server/models/lot.ts';
+import { Member } from '#server/models/member.ts';
+import type { Actor } from '#server/routing/define-route.ts';
+import { fundByFrom } from './deadlines.ts';
+import { sheetInputFor, storeDealSheets } from './deal-sheets.ts';
+import { recordAgreement } from './move-deal.ts';
+
+/** The rules that buyer and seller confirm; a change of their text is a new version. */
+export const RULES_VERSION = '2026-12';
+
+export type PurchaseInput = Pick<PurchaseRequest, 'total' | 'delivery'> & { lotId: string };
+
+type PricedLot = Lot & { priceMinor: bigint };
+
+async function readBuyableLot(lotId: string, unit: Unit, actor: Actor): Promise<PricedLot> {
+  const lot = await Lot.findByPk(lotId, { transaction: unit.tx });
+  if (lot === null) throw new NotFoundError();
+  if (lot.sellerId === actor.id) throw new ConflictError('own-lot');
+  if (lot.state === 'reserved' || lot.state === 'sold') throw new ConflictError('lot-taken');
+  const isPastClosing = lot.closesAt !== null && lot.closesAt.getTime() <= unit.now.getTime();
+  const isOffered = lot.state === 'open' && lot.pricingBasis === 'outright' && lot.settlesOn === 'stated';
+  if (!isOffered || isPastClosing || lot.priceMinor === null) throw new ConflictError('lot-not-open');
+  const seller = await Member.findByPk(lot.sellerId, { transaction: unit.tx });
+  if (seller === null || seller.suspendedAt !== null) throw new ConflictError('lot-not-open');
+  return lot as PricedLot;
+}
+
+async function assertMayBuy(unit: Unit, actor: Actor): Promise<void> {
+  const buyer = await Member.findByPk(actor.id, { transaction: unit.tx });
+  if (buyer === null || buyer.suspendedAt !== null) throw new ForbiddenError('member-suspended');
+}
+
+function assertServed(lot: Lot, country: string): void {
+  const served = lot.destinations as unknown;
+  if (Array.isArray(served) && served.includes(country)) return;
+  throw new AppError('destination-not-served', 'The seller does not ship to this country.', [
+    { pointer: '/delivery/country', code: 'destination-not-served', message: 'The seller does not ship there' },
+  ]);
+}
+
+function assertTotal(given: string, totalMinor: bigint): void {
+  try {
+    if (fromAmount(given, '/total').minor === totalMinor) return;
+  } catch (error) {
+    if (!(error instanceof MeasureError)) throw error;
+    throw new InvalidError([{ pointer: '/total', code: error.code, message: error.message }]);
+  }
+  throw new ConflictError('price-changed', 'Price or parcel charge have changed; look at the new total first.');
+}
+
+/** The rate of the payment method that is valid now; dated rows are only ever added. */
+async function currentFee(paymentMethod: 'card', unit: Unit): Promise<{ percent: string; minimumMinor: bigint }> {
+  const fee = await FeeSchedule.findOne({
+    where: { paymentMethod, validFrom: { [Op.lte]: unit.now } },
+    order: [['validFrom', 'DESC']],
+    transaction: unit.tx,
+  });
+  invariant(fee !== null, 'every payment method has a rate');
+  return { percent: plain(dec(fee.percent)), minimumMinor: fee.minimumMinor };
+}
+
+async function insertDeal(lot: PricedLot, input: PurchaseInput, unit: Unit, actor: Actor): Promise<Deal> {
+  const fee = await currentFee('card', unit);
+  const { priceMinor } = lot;
+  const shippingMinor = lot.shippingMinor ?? 0n;
+  const { delivery } = input;
+  try {
+    return await Deal.create(
+      {
+        id: newId(),
+        code: newCode('D'),
+        lotId: lot.id,
+        sellerId: lot.sellerId,
+        buyerId: actor.id,
+        state: 'agreed',
+        liveLotId: lot.id,
+        priceMinor,
+        shippingMinor,
+        totalMinor: priceMinor + shippingMinor,
+        commissionPercent: fee.percent,
+        commissionMinimumMinor: fee.minimumMinor,
+        commissionMinor: commissionFor(priceMinor, fee),
+        paymentMethod: 'card',
+        deliveryName: delivery.name,
+        deliveryLine1: delivery.line1,
+        deliveryLine2: delivery.line2,
+        deliveryCity: delivery.city,
+        deliveryPostcode: delivery.postcode,
+        deliveryRegion: delivery.region,
+        deliveryCountry: delivery.country,
+        deliveryPhone: delivery.phone,
+        rulesVersion: RULES_VERSION,
+        agreedAt: unit.now,
+        fundBy: fundByFrom(unit.now),
+      },
+      { transaction: unit.tx },
+    );
+  } catch (error) {
+    if (error instanceof UniqueConstraintError && 'deals_live_lot' in error.fields) {
+      throw new ConflictError('lot-taken');
+    }
+    throw error;
+  }
+}
+
+/**
+ * Makes the one deal over a lot at its outright price. Everything is computed here: price, parcel, total, commission at the
+ * rate valid now, and both provisional sheets at the newest accepted quotes; the buyer's total is only compared. The
+ * address is frozen into the deal. The lot is reserved until the deal is funded or lapses.
+ *
+ * Expects the lot's guard row to be locked; a UNIQUE key on the live deal of a lot stands behind it.
+ * Throws `not-found`, `own-lot`, `lot-taken`, `lot-not-open`, `member-suspended`, `destination-not-served`,
+ * `price-changed`, `no-fresh-quote`, `invalid-input`.
+ */
+export async function purchaseLot(
+  input: PurchaseInput,
+  unit: Unit & { quotes: QuoteBoard },
+  actor: Actor,
+): Promise<Deal> {
+  await assertMayBuy(unit, actor);
+  const lot = await readBuyableLot(input.lotId, unit, actor);
+  assertServed(lot, input.delivery.country);
+  assertTotal(input.total, lot.priceMinor + (lot.shippingMinor ?? 0n));
+  const deal = await insertDeal(lot, input, unit, actor);
+  await openDealAccounts(deal.id, unit);
+  await openMemberAccounts(deal.sellerId, unit);
+  const sheetInput = await sheetInputFor(lot, deal, quoteRefs(unit.quotes), unit);
+  await storeDealSheets(deal.id, 'provisional', sheetInput, unit);
+  const who = { actorKind: 'buyer', actorId: actor.id } as const;
+  await moveLot(lot, 'reserved', { act: 'reserved', ...who, detail: { dealCode: deal.code } }, unit);
+  await recordAgreement(deal, { act: 'agreed', ...who }, unit);
+  return deal;
+}
