@@ -38,6 +38,7 @@ Object.assign(process.env, {
   CARRIER_URL: `http://127.0.0.1:${carrier}`,
   CARRIER_API_KEY: 'test-carrier-key',
   STORAGE_DIR: storageFolder,
+  RATE_LIMIT_FACTOR: '100',
   LOG_LEVEL: 'silent',
 });
 

@@ -1,0 +1,112 @@
+import { describe, expect, it } from 'vitest';
+import { createApp } from '#server/app.ts';
+import { healthRoutes } from '#server/features/health/health-routes.ts';
+import { allRoutes } from '#server/routing/all-routes.ts';
+import { buildMember } from '#tests/factories/build-member.ts';
+import { startTestApp, type Visitor } from '#tests/helpers/test-app.ts';
+
+const app = await startTestApp();
+const declared = [...healthRoutes, ...allRoutes];
+
+type Layer = { route?: { path: string; methods: Record<string, boolean> } };
+
+/** Every path and method that the mounted router really answers. */
+function mountedRoutes(): string[] {
+  const made = createApp();
+  made.close();
+  const layers = (made.app as unknown as { router: { stack: Layer[] } }).router.stack;
+  return layers.flatMap((layer) =>
+    layer.route === undefined
+      ? []
+      : Object.keys(layer.route.methods).map((method) => `${method} ${layer.route!.path}`),
+  );
+}
+
+const sample = (path: string) =>
+  path
+    .replace(/:code/, path.includes('/deals/') ? 'D-ZZZZZZ' : 'S-ZZZZZZ')
+    .replace(/:size/, 'thumb')
+    .replace(/:\w+/g, '00000000-0000-7000-8000-00000000dead');
+
+describe('the route registry', () => {
+  it('names every route that is mounted, and each has a stated access', () => {
+    const registry = declared.map((route) => `${route.method} ${route.path}`).sort();
+    const mounted = mountedRoutes()
+      .filter((route) => route !== 'get /*splat')
+      .sort();
+    expect(mounted.length).toBeGreaterThan(20);
+    expect(mounted).toEqual(registry);
+    for (const route of declared) {
+      expect(
+        ['public', 'signed', 'member', 'desk', 'lab', 'admin'],
+        `${route.method} ${route.path}`,
+      ).toContain(route.access);
+      expect(route.summary.length, `${route.path} says what it is for`).toBeGreaterThan(5);
+    }
+  });
+
+  it('exempts only signed webhooks and public calculations from the token', () => {
+    const exempt = declared.filter((route) => route.csrf === 'exempt');
+    expect(exempt.map((route) => [route.path, route.access]).sort()).toEqual([
+      ['/api/v1/valuations', 'public'],
+      ['/api/v1/webhooks/stripe', 'signed'],
+    ]);
+  });
+
+  it('turns away whoever the access does not name, on every route', async () => {
+    const roles = ['member', 'desk', 'lab', 'admin'] as const;
+    const people = new Map<string, Visitor>();
+    for (const role of roles) people.set(role, await app.signIn(await buildMember({ role })));
+    people.set('nobody', await app.visitor());
+    const granted: Record<string, readonly string[]> = {
+      member: roles,
+      desk: ['desk', 'admin'],
+      lab: ['lab'],
+      admin: ['admin'],
+    };
+    for (const route of declared) {
+      const allowed = granted[route.access];
+      if (allowed === undefined) continue;
+      for (const [role, visitor] of people) {
+        if (allowed.includes(role)) continue;
+        const request =
+          route.method === 'get'
+            ? visitor.get(sample(route.path))
+            : route.method === 'delete'
+              ? visitor.delete(sample(route.path))
+              : route.method === 'put'
+                ? visitor.put(sample(route.path))
+                : visitor.post(sample(route.path), {});
+        const answer = await request;
+        const name = `${role}: ${route.method} ${route.path}`;
+        expect(answer.status, name).toBe(role === 'nobody' ? 401 : 403);
+        expect(answer.headers['content-type'], name).toContain('application/problem+json');
+      }
+    }
+  });
+
+  it('answers an unknown address of the API with a problem document', async () => {
+    const answer = await (await app.visitor()).get('/api/v1/nothing-like-it').expect(404);
+    expect(answer.headers['content-type']).toContain('application/problem+json');
+    expect(answer.body).toMatchObject({ code: 'not-found', status: 404, type: '/problems/not-found' });
+  });
+
+  it('answers a body that is not JSON with a problem document', async () => {
+    const visitor = await app.visitor();
+    const answer = await visitor.agent
+      .post('/api/v1/session')
+      .set('Content-Type', 'application/json')
+      .send('{"email":');
+    expect(answer.status).toBe(400);
+    expect(answer.body.code).toBe('malformed-request');
+  });
+
+  it('sends the security headers, and no word of the framework', async () => {
+    const answer = await (await app.visitor()).get('/api/v1/session').expect(200);
+    expect(answer.headers['content-security-policy']).toContain("script-src 'self'");
+    expect(answer.headers['content-security-policy']).not.toContain("script-src 'self' 'unsafe");
+    expect(answer.headers['x-content-type-options']).toBe('nosniff');
+    expect(answer.headers['cache-control']).toBe('no-store');
+    expect(answer.headers['x-powered-by']).toBeUndefined();
+  });
+});
