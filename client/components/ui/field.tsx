@@ -35,7 +35,12 @@ export function Field({ id, label, hint, error, optional = false, beside, classN
     <div className={cx('flex flex-col gap-1', error && 'border-l-2 border-litharge pl-3', className)}>
       <label htmlFor={id} className="font-medium">
         {label}
-        {optional && <span className="font-normal text-ink-2"> (may be left out)</span>}
+        {optional && (
+          <>
+            {' '}
+            <span className="font-normal text-ink-2">(may be left out)</span>
+          </>
+        )}
       </label>
       {hint && (
         <p id={`${id}-hint`} className="max-w-prose text-note text-ink-2">

@@ -3,7 +3,7 @@ import { cx } from '../../lib/cx.ts';
 
 const box =
   'min-h-10 w-full min-w-0 rounded-box border border-line bg-sheet px-3 py-2 text-ink ' +
-  'aria-invalid:border-2 aria-invalid:border-litharge disabled:border-dashed disabled:text-ink-2 read-only:bg-paper';
+  'aria-invalid:border-2 aria-invalid:border-litharge disabled:border-dashed disabled:text-ink-2 [&[readonly]]:bg-paper';
 
 const tick =
   'relative mt-px size-6 shrink-0 appearance-none border border-line bg-sheet checked:border-verdigris ' +

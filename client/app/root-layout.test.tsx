@@ -1,0 +1,66 @@
+import { QueryClientProvider } from '@tanstack/react-query';
+import { render, screen, waitFor } from '@testing-library/react';
+import userEvent from '@testing-library/user-event';
+import { http, HttpResponse } from 'msw';
+import { createMemoryRouter, RouterProvider } from 'react-router-dom';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { apiServer } from '#tests/setup/api-server.ts';
+import { queryClient } from '../lib/query-client.ts';
+import { chooseTheme } from '../lib/theme.ts';
+import { appRoutes } from './router.tsx';
+
+function open(path: string) {
+  vi.spyOn(window, 'scrollTo').mockImplementation(() => undefined);
+  const router = createMemoryRouter(appRoutes, { initialEntries: [path] });
+  render(
+    <QueryClientProvider client={queryClient}>
+      <RouterProvider router={router} />
+    </QueryClientProvider>,
+  );
+  return router;
+}
+
+beforeEach(() => {
+  queryClient.clear();
+  apiServer.use(http.get('/api/v1/session', () => HttpResponse.json({ csrfToken: 't', member: null })));
+});
+
+afterEach(() => {
+  vi.restoreAllMocks();
+  chooseTheme('system');
+});
+
+describe('the layout', () => {
+  it('shows a page with its title, a way past the header and the cautions line', async () => {
+    open('/');
+    expect(await screen.findByRole('heading', { level: 1 })).toBeVisible();
+    await waitFor(() => expect(document.title).toMatch(/ · Scruple$/));
+    expect(screen.getByRole('link', { name: 'Skip to the page' })).toHaveAttribute('href', '#main');
+    expect(screen.getByRole('main')).toHaveAttribute('id', 'main');
+    expect(screen.getByRole('contentinfo')).toHaveTextContent('Check your local rules');
+  });
+
+  it('shows visitors no room of members', async () => {
+    open('/');
+    await screen.findByRole('heading', { level: 1 });
+    expect(screen.queryByRole('link', { name: 'Deals' })).toBeNull();
+    expect(screen.queryByRole('link', { name: 'Desk' })).toBeNull();
+  });
+
+  it('answers an unknown address with the way out, and moves the focus to the new heading', async () => {
+    const router = open('/');
+    await screen.findByRole('heading', { level: 1 });
+    await router.navigate('/nowhere');
+    const heading = await screen.findByRole('heading', { name: 'Nothing is filed under this address' });
+    expect(heading).toHaveFocus();
+    expect(screen.getByRole('link', { name: 'Go to the first page' })).toHaveAttribute('href', '/');
+  });
+
+  it('sets the theme and goes back to the system’s', async () => {
+    open('/');
+    for (const theme of ['light', 'dark', undefined]) {
+      await userEvent.click(await screen.findByRole('button', { name: /^Paper:/ }));
+      expect(document.documentElement.dataset.theme).toBe(theme);
+    }
+  });
+});
