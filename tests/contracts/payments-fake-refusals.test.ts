@@ -62,6 +62,14 @@ describe('refusals', () => {
       'line_items[0][weight]',
     ],
     [
+      'the payment_method_types of older versions',
+      'checkout/sessions',
+      { ...session, payment_method_types: ['card'] },
+      400,
+      'parameter_unknown',
+      'payment_method_types',
+    ],
+    [
       'a session that lives 10 minutes',
       'checkout/sessions',
       { ...session, expires_at: soon(600) },

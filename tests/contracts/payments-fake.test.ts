@@ -415,6 +415,49 @@ describe('payouts', () => {
   });
 });
 
+describe('disputes', () => {
+  const dispute = async (minor: number) => {
+    const session = await kit.openSession(minor);
+    await kit.control('pay', { sessionId: session.id, cardNumber: '4000000000000259' });
+    const paid = await kit.stripe.checkout.sessions.retrieve(session.id, { expand: ['payment_intent'] });
+    const charge = String((paid.payment_intent as Stripe.PaymentIntent).latest_charge);
+    const opened = (await kit.stripe.disputes.list({ charge })).data[0] as Stripe.Dispute;
+    return { charge, opened };
+  };
+  const platform = async () => (await kit.books()).balances.platform ?? 0;
+
+  it('takes sum and fee at once and refuses a refund beside it', async () => {
+    const before = await platform();
+    const { charge, opened } = await dispute(10_000);
+    expect([opened.status, opened.amount, opened.reason]).toEqual(['needs_response', 10_000, 'fraudulent']);
+    // Paid 10,000 less the card fee of 320; then 10,000 and 1,500 leave.
+    expect((await platform()) - before).toBe(-320 - 1500);
+    expect((await failureOf(kit.stripe.refunds.create({ charge }))).code).toBe('charge_disputed');
+    expect((await eventTypes()).slice(0, 2)).toEqual([
+      'charge.dispute.funds_withdrawn',
+      'charge.dispute.created',
+    ]);
+  });
+
+  it('brings the sum back when won, never the fee', async () => {
+    const before = await platform();
+    const { charge, opened } = await dispute(10_000);
+    const answered = await kit.stripe.disputes.update(opened.id, { evidence: { shipping_carrier: 'Post' } });
+    expect(answered.status).toBe('under_review');
+    await kit.control(`disputes/${opened.id}/won`);
+    expect((await kit.stripe.disputes.retrieve(opened.id)).status).toBe('won');
+    expect((await kit.stripe.charges.retrieve(charge)).disputed).toBe(false);
+    expect((await platform()) - before).toBe(10_000 - 320 - 1500);
+    expect((await failureOf(kit.stripe.disputes.close(opened.id))).statusCode).toBe(400);
+  });
+
+  it('is lost when closed', async () => {
+    const { opened } = await dispute(5000);
+    expect((await kit.stripe.disputes.close(opened.id)).status).toBe('lost');
+    expect((await eventTypes())[0]).toBe('charge.dispute.closed');
+  });
+});
+
 describe('lists and balances', () => {
   it('pages through a list without gap or repeat, both ways', async () => {
     const own = await startKit();

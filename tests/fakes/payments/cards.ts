@@ -28,7 +28,9 @@ const declines: Record<string, CardOutcome> = {
   },
 };
 
-const accepted = new Set(['4242424242424242', '4000000000000077', '5555555555554444']);
+/** Pays, and is disputed by its holder right after. */
+export const disputingCard = '4000000000000259';
+const accepted = new Set(['4242424242424242', '4000000000000077', '5555555555554444', disputingCard]);
 
 /** Null when the card pays. A number that is not published here is declined, so nothing pays by chance. */
 export function declineOf(number: string): CardOutcome | null {

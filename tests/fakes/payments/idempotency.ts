@@ -17,6 +17,14 @@ export function fingerprint(method: string, path: string, body: unknown): string
   return JSON.stringify([method, path, sorted(body)]);
 }
 
+/** Drops what is a day old, so that the file does not grow without end. */
+export function forgetOldAnswers(fake: Fake): void {
+  const oldest = now(fake) - keptSeconds;
+  for (const [slot, answer] of Object.entries(fake.state.answers)) {
+    if (answer.savedAt <= oldest) delete fake.state.answers[slot];
+  }
+}
+
 /** Either the answer kept under the key, or a claim that is to be finished or dropped. */
 export interface Claim {
   saved: SavedAnswer | null;

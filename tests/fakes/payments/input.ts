@@ -31,6 +31,9 @@ export const listInput = {
   created: range.optional(),
 };
 
+/** Holds the names in a request's shape to those of the SDK: `satisfies ShapeOf<Stripe.RefundCreateParams>`. */
+export type ShapeOf<Params> = Partial<Record<keyof Params, z.ZodType>>;
+
 function bracketed(path: readonly PropertyKey[]): string {
   return path.map((part, index) => (index === 0 ? String(part) : `[${String(part)}]`)).join('');
 }

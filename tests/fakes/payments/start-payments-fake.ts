@@ -8,6 +8,7 @@ import { controlRouter } from './control/control-router.ts';
 import { runDue } from './due-work.ts';
 import type { Endpoint } from './endpoint.ts';
 import type { Fake } from './fake.ts';
+import { forgetOldAnswers } from './idempotency.ts';
 import { onboardingPages } from './pages/onboarding-page.ts';
 import { payPages } from './pages/pay-page.ts';
 import { accountLinkEndpoints } from './resources/account-links.ts';
@@ -16,6 +17,7 @@ import { balanceEndpoints } from './resources/balance.ts';
 import { capabilityEndpoints } from './resources/capabilities.ts';
 import { chargeEndpoints } from './resources/charges.ts';
 import { checkoutSessionEndpoints } from './resources/checkout-sessions.ts';
+import { disputeEndpoints } from './resources/disputes.ts';
 import { eventEndpoints } from './resources/event-log.ts';
 import { externalAccountEndpoints } from './resources/external-accounts.ts';
 import { paymentIntentEndpoints } from './resources/payment-intents.ts';
@@ -63,6 +65,7 @@ const endpoints: Endpoint[] = [
   ...externalAccountEndpoints,
   ...payoutEndpoints,
   ...balanceEndpoints,
+  ...disputeEndpoints,
   ...eventEndpoints,
   ...webhookEndpointEndpoints,
 ];
@@ -83,6 +86,7 @@ function createFake(options: PaymentsFakeOptions, initial: Settings): Fake {
     publicUrl: '',
   } as Omit<Fake, 'store'> as Fake;
   fake.store = openStore(dataDir, (): State => fake.state);
+  forgetOldAnswers(fake);
   return fake;
 }
 

@@ -7,6 +7,7 @@ export interface Kinds {
   bank_account: Stripe.BankAccount;
   charge: Stripe.Charge;
   'checkout.session': Stripe.Checkout.Session;
+  dispute: Stripe.Dispute;
   event: Stripe.Event;
   payment_intent: Stripe.PaymentIntent;
   payout: Stripe.Payout;

@@ -6,6 +6,7 @@ import { couldNotProcess, isKnownBank, payingBank, payoutFailureOf } from '../ba
 import { lookUp, ownerOf, platform } from '../fake.ts';
 import type { Fake } from '../fake.ts';
 import { faultInput } from '../faults.ts';
+import { forgetOldAnswers } from '../idempotency.ts';
 import { runDue } from '../due-work.ts';
 import { controlPage } from '../pages/control-page.ts';
 import { completeOnboarding } from '../resources/account-state.ts';
@@ -14,6 +15,7 @@ import { markFailed, markPaid } from '../resources/payout-progress.ts';
 import { failRefund } from '../resources/refunds.ts';
 import { emptyState } from '../state.ts';
 import type { Settings } from '../state.ts';
+import { disputeControls } from './dispute-controls.ts';
 import { done } from './done.ts';
 import { webhookControls } from './webhook-controls.ts';
 
@@ -103,6 +105,7 @@ function stateControls(fake: Fake, initial: Settings): Router {
     fake.state.clockOffsetSeconds += advanceSeconds;
     fake.store.touch();
     runDue(fake);
+    forgetOldAnswers(fake);
     await done(fake, request, response, { clockOffsetSeconds: fake.state.clockOffsetSeconds });
   });
   router.post('/settings', async (request, response) => {
@@ -135,6 +138,7 @@ export function controlRouter(fake: Fake, initial: Settings): Router {
   const controls = express.Router();
   controls.use(express.json(), express.urlencoded({ extended: false }));
   controls.use(readControls(fake), stateControls(fake, initial), moneyControls(fake), webhookControls(fake));
+  controls.use(disputeControls(fake));
   router.use('/control', controls);
   return router;
 }

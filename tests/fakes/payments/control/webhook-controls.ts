@@ -51,6 +51,8 @@ export function webhookControls(fake: Fake): Router {
   });
   router.post('/webhooks/redeliver', async (request, response) => {
     const input = redeliverInput.parse(request.body ?? {});
+    if (fake.options.webhookUrl === '')
+      return void response.status(409).json({ error: 'no webhook configured' });
     const event = lookUp(fake, 'event', input.eventId);
     if (!event) return void response.status(404).json({ error: 'no such event' });
     const told = input.asNewEvent ? copyOf(fake, event) : event;

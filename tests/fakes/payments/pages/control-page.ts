@@ -42,7 +42,7 @@ function eventRows(fake: Fake): string[][] {
       const again = button('/control/webhooks/redeliver', `Send ${event.id.slice(-4)} again`, {
         eventId: event.id,
       });
-      return [event.id, event.type, told, again];
+      return [event.id, event.type, told, delivery ? again : ''];
     });
 }
 

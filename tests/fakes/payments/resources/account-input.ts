@@ -1,5 +1,7 @@
+import type Stripe from 'stripe';
 import { z } from 'zod';
 import { flag, integer, metadata, text, url } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 
 const capability = z.strictObject({ requested: flag });
 
@@ -30,7 +32,7 @@ const changeable = {
     .strictObject({ service_agreement: z.enum(['full', 'recipient']), date: integer, ip: text })
     .partial()
     .optional(),
-};
+} satisfies ShapeOf<Stripe.AccountUpdateParams>;
 
 export const createAccountInput = {
   ...changeable,
@@ -46,7 +48,7 @@ export const createAccountInput = {
     })
     .partial()
     .optional(),
-};
+} satisfies ShapeOf<Stripe.AccountCreateParams>;
 export type CreateAccount = z.output<z.ZodObject<typeof createAccountInput>>;
 
 export const updateAccountInput = changeable;

@@ -1,5 +1,7 @@
+import type Stripe from 'stripe';
 import { z } from 'zod';
 import { amount, currency, flag, integer, metadata, text, url } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 
 const product = z.strictObject({
   name: text,
@@ -30,17 +32,14 @@ export const createSessionInput = {
   locale: text.optional(),
   metadata: metadata.optional(),
   payment_intent_data: intentData.optional(),
-  payment_method_types: z
-    .array(z.enum(['card']))
-    .min(1)
-    .optional(),
+  /** This version of the API has no `payment_method_types` here any more. */
   allowed_payment_method_types: z
     .array(z.enum(['card']))
     .min(1)
     .optional(),
   submit_type: z.enum(['auto', 'pay', 'book', 'donate']).optional(),
   allow_promotion_codes: flag.optional(),
-};
+} satisfies ShapeOf<Stripe.Checkout.SessionCreateParams>;
 
 export const createSessionSchema = z.strictObject(createSessionInput);
 export type CreateSession = z.output<typeof createSessionSchema>;

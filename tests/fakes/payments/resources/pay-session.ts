@@ -1,12 +1,13 @@
 import type Stripe from 'stripe';
 import { cardFee, moveOutside } from '../balances.ts';
 import { outside } from '../books.ts';
-import { declineOf } from '../cards.ts';
+import { declineOf, disputingCard } from '../cards.ts';
 import { emit } from '../events.ts';
 import { idOf, keep, mustFind, now, platform } from '../fake.ts';
 import type { Fake } from '../fake.ts';
 import { buildCardCharge } from './charge-builder.ts';
 import type { Card } from './charge-builder.ts';
+import { openDispute } from './dispute-progress.ts';
 import { createIntent } from './payment-intents.ts';
 
 export type PayResult =
@@ -94,6 +95,9 @@ export function paySession(fake: Fake, session: Stripe.Checkout.Session, card: C
     return { outcome: 'declined', ...reason };
   }
   settle(fake, session, intent, card);
+  if (card.number === disputingCard) {
+    openDispute(fake, mustFind(fake, 'charge', idOf(intent.latest_charge) ?? ''), 'fraudulent');
+  }
   fake.store.touch();
   return { outcome: 'paid' };
 }

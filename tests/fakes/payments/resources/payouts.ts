@@ -9,6 +9,7 @@ import { refused } from '../errors.ts';
 import { emit } from '../events.ts';
 import { allOf, keep, lookUp, newId, now } from '../fake.ts';
 import { amount, currency, listInput, mergeMetadata, metadata, text } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 import { paginate } from '../paginate.ts';
 
 const createInput = {
@@ -20,7 +21,7 @@ const createInput = {
   method: z.enum(['standard']).optional(),
   source_type: z.enum(['card']).optional(),
   statement_descriptor: z.string().min(1).max(22).optional(),
-};
+} satisfies ShapeOf<Stripe.PayoutCreateParams>;
 type Create = z.output<z.ZodObject<typeof createInput>>;
 
 function bankOf(call: Call<Create>): { id: string; number: string } {

@@ -9,6 +9,7 @@ import { emit } from '../events.ts';
 import { allOf, idOf, keep, mustFind, newId, now, platform } from '../fake.ts';
 import type { Fake } from '../fake.ts';
 import { amount, listInput, mergeMetadata, metadata, text } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 import { paginate } from '../paginate.ts';
 
 const createInput = {
@@ -17,7 +18,7 @@ const createInput = {
   amount: amount.optional(),
   reason: z.enum(['duplicate', 'fraudulent', 'requested_by_customer']).optional(),
   metadata: metadata.optional(),
-};
+} satisfies ShapeOf<Stripe.RefundCreateParams>;
 
 type Create = z.output<z.ZodObject<typeof createInput>>;
 
@@ -60,6 +61,9 @@ function createRefund(call: Call<Create>): Stripe.Refund {
   const charge = chargeOf(call);
   if (!charge.paid || charge.payment_intent === null) {
     throw refused(`Charge ${charge.id} cannot be refunded.`, 'charge_not_refundable', 'charge');
+  }
+  if (charge.disputed) {
+    throw refused(`Charge ${charge.id} has been charged back.`, 'charge_disputed', 'charge');
   }
   const rest = charge.amount - charge.amount_refunded;
   if (rest === 0) {

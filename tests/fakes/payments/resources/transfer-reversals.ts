@@ -7,13 +7,14 @@ import { refused, resourceMissing } from '../errors.ts';
 import { emit } from '../events.ts';
 import { idOf, keep, mustFind, newId, now, platform } from '../fake.ts';
 import { amount, listInput, mergeMetadata, metadata, text } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 import { paginate } from '../paginate.ts';
 
 const createInput = {
   amount: amount.optional(),
   description: text.optional(),
   metadata: metadata.optional(),
-};
+} satisfies ShapeOf<Stripe.TransferCreateReversalParams>;
 type Create = z.output<z.ZodObject<typeof createInput>>;
 
 function createReversal(call: Call<Create>): Stripe.TransferReversal {

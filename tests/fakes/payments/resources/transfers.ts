@@ -8,6 +8,7 @@ import { emit } from '../events.ts';
 import { allOf, idOf, keep, mustFind, newId, now, platform } from '../fake.ts';
 import type { Fake } from '../fake.ts';
 import { amount, currency, listInput, mergeMetadata, metadata, text } from '../input.ts';
+import type { ShapeOf } from '../input.ts';
 import { paginate, wholeList } from '../paginate.ts';
 import { buildTransferPayment } from './charge-builder.ts';
 
@@ -19,7 +20,7 @@ const createInput = {
   metadata: metadata.optional(),
   source_transaction: text.optional(),
   transfer_group: text.optional(),
-};
+} satisfies ShapeOf<Stripe.TransferCreateParams>;
 type Create = z.output<z.ZodObject<typeof createInput>>;
 
 /** What a charge can still give to transfers that name it as their source. */
