@@ -38,6 +38,8 @@ for (const job of allJobs) {
 // What waited while nothing ran is done at once, not at the next poke.
 for (const job of allJobs) await poke(job);
 logger.info({ jobs: allJobs.map((job) => job.name) }, 'jobs are running');
+// The start waits for this word where it started us with a channel.
+process.send?.('ready');
 
 async function stop(signal: NodeJS.Signals): Promise<void> {
   logger.info({ signal }, 'stopping');
