@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { Decimal } from 'decimal.js';
 import { describe, expect, it } from 'vitest';
-import { rational, toPlaces } from '#tests/helpers/rational.ts';
+import { rational, toPlaces } from './testing/rational.ts';
 import {
   Dec,
   compareDecimals,

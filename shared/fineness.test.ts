@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { ratio, rational, times, toPlaces } from '#tests/helpers/rational.ts';
+import { ratio, rational, times, toPlaces } from './testing/rational.ts';
 import { dec, fixed, plain, roundToStep } from './decimal.ts';
 import { MeasureError } from './domain-error.ts';
 import {

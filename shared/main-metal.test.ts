@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { over, plus, ratio, rational, times, toPlaces } from '#tests/helpers/rational.ts';
+import { over, plus, ratio, rational, times, toPlaces } from './testing/rational.ts';
 import { dec } from './decimal.ts';
 import { MeasureError } from './domain-error.ts';
 import { rankingKeys, type RankingInput } from './main-metal.ts';

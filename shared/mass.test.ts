@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { over, rational, toPlaces, times } from '#tests/helpers/rational.ts';
+import { over, rational, toPlaces, times } from './testing/rational.ts';
 import { dec, fixed, plain } from './decimal.ts';
 import { MeasureError } from './domain-error.ts';
 import {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, expectTypeOf, it } from 'vitest';
-import { rational, ratio, times, nearest } from '#tests/helpers/rational.ts';
+import { rational, ratio, times, nearest } from './testing/rational.ts';
 import { apportion } from './apportion.ts';
 import { dec } from './decimal.ts';
 import { MeasureError } from './domain-error.ts';

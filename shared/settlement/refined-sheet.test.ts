@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { ratio, rational, times } from '#tests/helpers/rational.ts';
-import { isExpandedRight, oracleLine, type OracleMetal } from '#tests/helpers/sheet-oracle.ts';
+import { ratio, rational, times } from '../testing/rational.ts';
+import { isExpandedRight, oracleLine, type OracleMetal } from '../testing/sheet-oracle.ts';
 import { MeasureError } from '../domain-error.ts';
 import { METALS, type Metal } from '../metals.ts';
 import { fromAmount } from '../money.ts';

@@ -1,5 +1,6 @@
 /**
- * Exact fractions on native BigInt: an oracle for the engine that shares no code with it and no decimal library.
+ * Exact fractions on native BigInt: an oracle for the engine that shares no code with it and no decimal library. For
+ * tests only: nothing that runs imports this folder.
  */
 export type Rational = { readonly over: bigint; readonly under: bigint };
 
