@@ -21,35 +21,37 @@ function isExecutable(file) {
   }
 }
 
-/** Installs a Debian package unless all its programs are there; where that is not possible, says which command to run. */
-export async function ensureDebianPackage(packageName, programs) {
+/** Installs Debian packages unless all programs are there; where that is not possible, says which command to run. */
+async function ensureDebianPackages(packages, programs) {
   const missing = programs.filter((program) => !findProgram(program));
   if (missing.length === 0) return;
-  const command = `apt-get update && apt-get install -y --no-install-recommends ${packageName}`;
+  const packageNames = packages.join(' ');
+  const command = `apt-get update && apt-get install -y --no-install-recommends ${packageNames}`;
   const isRoot = process.getuid?.() === 0;
   const byHand = `${missing.join(' and ')} missing. Run this, then start again:\n\n  ${isRoot ? '' : 'sudo '}sh -c '${command}'\n`;
   if (!findProgram('apt-get')) {
-    throw new Halt(
-      `${byHand}\nThis system has no apt-get: install the package ${packageName} in its own way.`,
-    );
+    throw new Halt(`${byHand}\nThis system has no apt-get: install ${packageNames} in its own way.`);
   }
   if (!isRoot && !findProgram('sudo')) throw new Halt(byHand);
-  say(`Installing ${packageName} (${missing.join(', ')} missing) …`);
+  say(`Installing ${packageNames} (${missing.join(', ')} missing) …`);
   const prefix = isRoot ? [] : ['sudo', ...(process.stdin.isTTY ? [] : ['-n'])];
   const [program, ...args] = [...prefix, 'env', 'DEBIAN_FRONTEND=noninteractive', 'sh', '-c', command];
   const hasWorked = await runTool(program, args, { input: 'inherit' });
   const stillMissing = programs.filter((name) => !findProgram(name));
   if (!hasWorked || stillMissing.length > 0) {
-    throw new Halt(`Installing ${packageName} did not work. ${byHand}`);
+    throw new Halt(`Installing ${packageNames} did not work. ${byHand}`);
   }
 }
 
-/** The database server and its installer. */
+/** The database server and its installer, a script that cannot work without a small program of the client's package. */
 export function ensureMariadb() {
-  return ensureDebianPackage('mariadb-server-core', ['mariadbd', 'mariadb-install-db']);
+  return ensureDebianPackages(
+    ['mariadb-server-core', 'mariadb-client-core'],
+    ['mariadbd', 'mariadb-install-db', 'my_print_defaults'],
+  );
 }
 
 /** The browser of the tests. */
 export function ensureChromium() {
-  return ensureDebianPackage('chromium', ['chromium']);
+  return ensureDebianPackages(['chromium'], ['chromium']);
 }
