@@ -1,6 +1,17 @@
+import { auditRoutes } from '#server/features/audit/audit-routes.ts';
+import { caseRoutes } from '#server/features/desk/case-routes.ts';
+import { deskMemberRoutes } from '#server/features/desk/desk-member-routes.ts';
+import { laboratoryRoutes } from '#server/features/laboratories/laboratory-routes.ts';
 import { quoteRoutes } from '#server/features/quotes/quote-routes.ts';
 import { sessionRoutes } from '#server/features/members/session-routes.ts';
 import type { RouteDefinition } from './define-route.ts';
 
 /** Every route of the product. A test walks the mounted router and fails on one that does not stand here. */
-export const allRoutes: readonly RouteDefinition[] = [...sessionRoutes, ...quoteRoutes];
+export const allRoutes: readonly RouteDefinition[] = [
+  ...sessionRoutes,
+  ...quoteRoutes,
+  ...laboratoryRoutes,
+  ...caseRoutes,
+  ...deskMemberRoutes,
+  ...auditRoutes,
+];

@@ -164,6 +164,8 @@ export const verifyRequest = z.object({
     .max(500),
   confirmedWith: z.string().trim().min(2, 'Say with whom it was confirmed').max(200),
   confirmedOn: z.iso.date('Write a date such as 2026-11-30'),
+  /** The mark that the report names is seen on the lot's photos; said by the desk, never inferred. */
+  isMarkSeen: z.boolean().default(false),
 });
 export type VerifyRequest = z.infer<typeof verifyRequest>;
 
@@ -171,13 +173,20 @@ export const examineRequest = z.object({
   version: z.number().int(),
   note: z.string().trim().min(5, 'Say what was looked at').max(500),
 });
+export type ExamineRequest = z.infer<typeof examineRequest>;
 export const returnRequest = z.object({
   version: z.number().int(),
   reason: z.string().trim().min(10, 'Give the seller a reason in a sentence').max(1000),
 });
+export type ReturnRequest = z.infer<typeof returnRequest>;
 
 export const suspendRequest = z.object({
   reason: z.string().trim().min(10, 'Give a reason in a sentence').max(500),
+});
+
+export const auditQuery = z.object({
+  before: instant.optional(),
+  limit: z.coerce.number().int().min(1).max(100).default(50),
 });
 
 export const auditRow = z.object({
@@ -215,4 +224,7 @@ export const deskMemberAnswer = z.object({
   suspensionReason: z.string().nullable(),
   can: z.object({ suspend: z.boolean(), reinstate: z.boolean() }),
 });
+export type DeskMemberAnswer = z.infer<typeof deskMemberAnswer>;
+/** A part of the name, or a whole e-mail address; nothing typed lists who is suspended. */
+export const deskMembersQuery = z.object({ query: z.string().trim().max(254).default('') });
 export const deskMembersAnswer = z.object({ members: z.array(deskMemberAnswer) });
