@@ -43,12 +43,12 @@ const FIGURES = "font-family:'DM Mono',ui-monospace,Menlo,Consolas,monospace";
 const STYLE = `
   :root { color-scheme: light dark; }
   @media (prefers-color-scheme: dark) {
-    .page { background: #15191a !important; }
-    .card { background: #1e2426 !important; border-color: #3a4346 !important; }
-    .card, .card h1, .card td { color: #eef0ec !important; }
-    .quiet { color: #a9b3b0 !important; }
-    .rule { border-color: #3a4346 !important; }
-    .act { background: #7fc4ae !important; color: #10201b !important; }
+    .page { background: #161b1d !important; }
+    .card { background: #1d2426 !important; border-color: #343d3f !important; }
+    .card, .card h1, .card td { color: #ece7dc !important; }
+    .quiet { color: #a6aeac !important; }
+    .rule { border-color: #343d3f !important; }
+    .act { background: #6fc2b0 !important; color: #161b1d !important; }
   }`;
 
 function paragraph(text: string): string {
@@ -56,7 +56,7 @@ function paragraph(text: string): string {
 }
 
 function factRow({ label, value }: { label: string; value: string }): string {
-  return `<tr><td class="quiet rule" style="padding:7px 12px 7px 0;border-top:1px solid #d5d8d1;color:#59625f;vertical-align:top">${escapeHtml(label)}</td><td class="rule" style="padding:7px 0;border-top:1px solid #d5d8d1;text-align:right;${FIGURES};font-size:14px">${escapeHtml(value)}</td></tr>`;
+  return `<tr><td class="quiet rule" style="padding:7px 12px 7px 0;border-top:1px solid #d8d1c3;color:#566064;vertical-align:top">${escapeHtml(label)}</td><td class="rule" style="padding:7px 0;border-top:1px solid #d8d1c3;text-align:right;${FIGURES};font-size:14px">${escapeHtml(value)}</td></tr>`;
 }
 
 function renderHtml(content: MailContent, reader: MailReader, address: string | null): string {
@@ -67,14 +67,14 @@ function renderHtml(content: MailContent, reader: MailReader, address: string | 
   const action =
     content.action === null || address === null
       ? ''
-      : `<p style="margin:0 0 18px"><a class="act" href="${escapeHtml(address)}" style="display:inline-block;padding:12px 18px;background:#1d5c4b;color:#ffffff;text-decoration:none;border-radius:4px;font-weight:600">${escapeHtml(content.action.label)}</a></p>`;
+      : `<p style="margin:0 0 18px"><a class="act" href="${escapeHtml(address)}" style="display:inline-block;padding:12px 18px;background:#17685c;color:#fffdf8;text-decoration:none;border-radius:4px;font-weight:600">${escapeHtml(content.action.label)}</a></p>`;
   return `<!doctype html>
 <html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width,initial-scale=1"><meta name="color-scheme" content="light dark"><title>${escapeHtml(content.subject)}</title><style>${STYLE}</style></head>
-<body class="page" style="margin:0;padding:16px 8px;background:#f3f4ef">
-<div class="card" style="max-width:560px;margin:0 auto;padding:22px 20px;background:#ffffff;border:1px solid #d5d8d1;border-radius:6px;color:#1b2220;${FONT};font-size:16px;overflow-wrap:anywhere">
+<body class="page" style="margin:0;padding:16px 8px;background:#f6f3ec">
+<div class="card" style="max-width:560px;margin:0 auto;padding:22px 20px;background:#fffdf8;border:1px solid #d8d1c3;border-radius:6px;color:#1c2427;${FONT};font-size:16px;overflow-wrap:anywhere">
 <h1 style="margin:0 0 16px;font-size:21px;line-height:1.25">${escapeHtml(content.heading)}</h1>
 ${paragraph(`Dear ${reader.displayName},`)}${content.paragraphs.map(paragraph).join('')}${facts}${action}${content.closing.map(paragraph).join('')}
-<p class="quiet rule" style="margin:20px 0 0;padding-top:12px;border-top:1px solid #d5d8d1;color:#59625f;font-size:13px;line-height:1.45">${escapeHtml(FOOT)}</p>
+<p class="quiet rule" style="margin:20px 0 0;padding-top:12px;border-top:1px solid #d8d1c3;color:#566064;font-size:13px;line-height:1.45">${escapeHtml(FOOT)}</p>
 </div></body></html>
 `;
 }

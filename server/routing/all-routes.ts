@@ -1,5 +1,7 @@
 import { auditRoutes } from '#server/features/audit/audit-routes.ts';
 import { caseRoutes } from '#server/features/desk/case-routes.ts';
+import { dealRoutes } from '#server/features/deals/deal-routes.ts';
+import { deskDealRoutes } from '#server/features/deals/desk-deal-routes.ts';
 import { deskMemberRoutes } from '#server/features/desk/desk-member-routes.ts';
 import { laboratoryRoutes } from '#server/features/laboratories/laboratory-routes.ts';
 import { quoteRoutes } from '#server/features/quotes/quote-routes.ts';
@@ -10,6 +12,8 @@ import type { RouteDefinition } from './define-route.ts';
 export const allRoutes: readonly RouteDefinition[] = [
   ...sessionRoutes,
   ...quoteRoutes,
+  ...dealRoutes,
+  ...deskDealRoutes,
   ...laboratoryRoutes,
   ...caseRoutes,
   ...deskMemberRoutes,

@@ -89,7 +89,12 @@ export async function mailParcelDelivered(deal: Deal, signedBy: string | null, u
   };
   const key = `parcel-delivered:${deal.id}`;
   await enqueueMail(
-    { mail: 'parcel-delivered-buyer', memberId: deal.buyerId, uniqueKey: `${key}:buyer`, input: { ...input, signedBy } },
+    {
+      mail: 'parcel-delivered-buyer',
+      memberId: deal.buyerId,
+      uniqueKey: `${key}:buyer`,
+      input: { ...input, signedBy },
+    },
     unit,
   );
   await enqueueMail(

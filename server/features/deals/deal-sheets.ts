@@ -1,39 +1,17 @@
 import { MeasureError } from '#shared/domain-error.ts';
-import type { FinenessUnit } from '#shared/fineness.ts';
-import type { MassUnit } from '#shared/mass.ts';
-import type { AssayMethodKey } from '#shared/assay/methods.ts';
-import { isMetal, type Metal, type OtherElement } from '#shared/metals.ts';
 import { minorToAmount } from '#shared/money.ts';
 import { ENGINE_VERSION, refinedSheet } from '#shared/settlement/refined-sheet.ts';
-import type { ContentEntry, QuoteRef, RefinedSheetInput } from '#shared/settlement/sheet-types.ts';
+import type { QuoteRef, RefinedSheetInput } from '#shared/settlement/sheet-types.ts';
 import { ConflictError, invariant } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
+import { lotEntryOf, lotSheetInput } from '#server/features/lots/lot-entry.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { DealSheet } from '#server/models/deal-sheet.ts';
 import type { Lot } from '#server/models/lot.ts';
 import { LotAssay } from '#server/models/lot-assay.ts';
 
-function contentOf(assay: LotAssay): ContentEntry {
-  const { uncertaintyValue, uncertaintyUnit } = assay;
-  const isGiven = !assay.isUncertaintyAssumed && uncertaintyValue !== null && uncertaintyUnit !== null;
-  return {
-    metal: assay.element as Metal | OtherElement,
-    fineness: { value: assay.finenessValue, unit: assay.finenessUnit as FinenessUnit },
-    uncertainty: isGiven ? { value: uncertaintyValue, unit: uncertaintyUnit as FinenessUnit } : null,
-    method: assay.method as AssayMethodKey,
-    paidFor: assay.isPaidFor,
-  };
-}
-
-async function contentsOf(lot: Lot, unit: Unit): Promise<ContentEntry[]> {
-  const assays = await LotAssay.findAll({
-    where: { lotId: lot.id, assayVersion: lot.assayVersion },
-    order: [['position', 'ASC']],
-    transaction: unit.tx,
-  });
-  return assays.map(contentOf);
-}
+type Terms = Pick<Deal, 'commissionPercent' | 'commissionMinimumMinor' | 'paymentMethod'>;
 
 /**
  * What the deal's sheets are computed from: the lot as it stands, the terms of the deal, and the quotes of the moment. It is
@@ -42,31 +20,27 @@ async function contentsOf(lot: Lot, unit: Unit): Promise<ContentEntry[]> {
  */
 export async function sheetInputFor(
   lot: Lot,
-  deal: Pick<Deal, 'priceMinor' | 'shippingMinor' | 'commissionPercent' | 'commissionMinimumMinor' | 'paymentMethod'>,
+  terms: Terms,
   quotes: readonly QuoteRef[],
   unit: Unit,
 ): Promise<RefinedSheetInput> {
-  invariant(lot.grossValue !== null && lot.grossUnit !== null, 'an open lot has its mass');
-  const contents = await contentsOf(lot, unit);
-  const paid = contents.filter((content) => content.paidFor && isMetal(content.metal)).map(({ metal }) => metal);
-  const { readabilityValue, readabilityUnit } = lot;
+  const assays = await LotAssay.findAll({
+    where: { lotId: lot.id, assayVersion: lot.assayVersion },
+    transaction: unit.tx,
+  });
+  const entry = lotEntryOf(lot, assays);
+  invariant(entry !== null, 'an open lot has its mass and its assay');
+  const paid = entry.contents.filter(({ paidFor }) => paidFor).map(({ metal }) => metal);
+  const commission = {
+    method: terms.paymentMethod,
+    percent: terms.commissionPercent,
+    minimum: minorToAmount(terms.commissionMinimumMinor),
+  };
+  const used = quotes.filter(({ metal }) => paid.includes(metal));
   const input: RefinedSheetInput = {
-    gross: { value: lot.grossValue, unit: lot.grossUnit as MassUnit },
-    readability:
-      readabilityValue === null || readabilityUnit === null
-        ? null
-        : { value: readabilityValue, unit: readabilityUnit as MassUnit },
-    contents,
-    quotes: quotes.filter(({ metal }) => paid.includes(metal)),
-    price: { amount: minorToAmount(deal.priceMinor) },
-    shipping: { amount: minorToAmount(deal.shippingMinor) },
-    commission: {
-      method: deal.paymentMethod,
-      percent: deal.commissionPercent,
-      minimum: minorToAmount(deal.commissionMinimumMinor),
-    },
+    ...lotSheetInput(lot, entry, used, commission),
+    shipping: { amount: minorToAmount(lot.shippingMinor ?? 0n) },
     moment: 'provisional',
-    audience: 'seller',
   };
   assertQuoted(input);
   return input;

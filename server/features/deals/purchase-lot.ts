@@ -1,17 +1,23 @@
-import { Op, UniqueConstraintError } from 'sequelize';
+import { UniqueConstraintError } from 'sequelize';
 import { MeasureError } from '#shared/domain-error.ts';
 import { fromAmount } from '#shared/money.ts';
 import type { PurchaseRequest } from '#shared/schemas/deals.ts';
 import { commissionFor } from '#shared/settlement/commission.ts';
-import { dec, plain } from '#shared/decimal.ts';
-import { AppError, ConflictError, ForbiddenError, InvalidError, NotFoundError, invariant } from '#server/app-error.ts';
+import {
+  AppError,
+  ConflictError,
+  ForbiddenError,
+  InvalidError,
+  NotFoundError,
+  invariant,
+} from '#server/app-error.ts';
 import { newCode, newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
-import { openDealAccounts, openMemberAccounts } from '#server/features/ledger/open-accounts.ts';
+import { openDealAccounts } from '#server/features/ledger/open-accounts.ts';
+import { currentFees } from '#server/features/lots/fee-queries.ts';
 import { moveLot } from '#server/features/lots/move-lot.ts';
 import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import { Deal } from '#server/models/deal.ts';
-import { FeeSchedule } from '#server/models/fee-schedule.ts';
 import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
 import type { Actor } from '#server/routing/define-route.ts';
@@ -24,11 +30,15 @@ export const RULES_VERSION = '2026-12';
 
 export type PurchaseInput = Pick<PurchaseRequest, 'total' | 'delivery'> & { lotId: string };
 
+/** A lot that has not been in the market; of one that was, a buyer is told that it no longer is. */
+const NEVER_SHOWN: readonly Lot['state'][] = ['draft', 'submitted', 'returned'];
+
 type PricedLot = Lot & { priceMinor: bigint };
 
 async function readBuyableLot(lotId: string, unit: Unit, actor: Actor): Promise<PricedLot> {
   const lot = await Lot.findByPk(lotId, { transaction: unit.tx });
-  if (lot === null) throw new NotFoundError();
+  if (lot === null || (lot.sellerId !== actor.id && NEVER_SHOWN.includes(lot.state)))
+    throw new NotFoundError();
   if (lot.sellerId === actor.id) throw new ConflictError('own-lot');
   if (lot.state === 'reserved' || lot.state === 'sold') throw new ConflictError('lot-taken');
   const isPastClosing = lot.closesAt !== null && lot.closesAt.getTime() <= unit.now.getTime();
@@ -48,7 +58,11 @@ function assertServed(lot: Lot, country: string): void {
   const served = lot.destinations as unknown;
   if (Array.isArray(served) && served.includes(country)) return;
   throw new AppError('destination-not-served', 'The seller does not ship to this country.', [
-    { pointer: '/delivery/country', code: 'destination-not-served', message: 'The seller does not ship there' },
+    {
+      pointer: '/delivery/country',
+      code: 'destination-not-served',
+      message: 'The seller does not ship there',
+    },
   ]);
 }
 
@@ -59,22 +73,15 @@ function assertTotal(given: string, totalMinor: bigint): void {
     if (!(error instanceof MeasureError)) throw error;
     throw new InvalidError([{ pointer: '/total', code: error.code, message: error.message }]);
   }
-  throw new ConflictError('price-changed', 'Price or parcel charge have changed; look at the new total first.');
-}
-
-/** The rate of the payment method that is valid now; dated rows are only ever added. */
-async function currentFee(paymentMethod: 'card', unit: Unit): Promise<{ percent: string; minimumMinor: bigint }> {
-  const fee = await FeeSchedule.findOne({
-    where: { paymentMethod, validFrom: { [Op.lte]: unit.now } },
-    order: [['validFrom', 'DESC']],
-    transaction: unit.tx,
-  });
-  invariant(fee !== null, 'every payment method has a rate');
-  return { percent: plain(dec(fee.percent)), minimumMinor: fee.minimumMinor };
+  throw new ConflictError(
+    'price-changed',
+    'Price or parcel charge have changed; look at the new total first.',
+  );
 }
 
 async function insertDeal(lot: PricedLot, input: PurchaseInput, unit: Unit, actor: Actor): Promise<Deal> {
-  const fee = await currentFee('card', unit);
+  const fee = (await currentFees(unit.now, unit.tx)).find(({ method }) => method === 'card');
+  invariant(fee !== undefined, 'every payment method has a rate');
   const { priceMinor } = lot;
   const shippingMinor = lot.shippingMinor ?? 0n;
   const { delivery } = input;
@@ -137,7 +144,6 @@ export async function purchaseLot(
   assertTotal(input.total, lot.priceMinor + (lot.shippingMinor ?? 0n));
   const deal = await insertDeal(lot, input, unit, actor);
   await openDealAccounts(deal.id, unit);
-  await openMemberAccounts(deal.sellerId, unit);
   const sheetInput = await sheetInputFor(lot, deal, quoteRefs(unit.quotes), unit);
   await storeDealSheets(deal.id, 'provisional', sheetInput, unit);
   const who = { actorKind: 'buyer', actorId: actor.id } as const;

@@ -1,0 +1,88 @@
+import type { z } from 'zod';
+import { dealAnswer, dealParams, rulingRequest, type DealAnswer } from '#shared/schemas/deals.ts';
+import { deskDealsAnswer } from '#shared/schemas/desk.ts';
+import { reasonRequest } from '#shared/schemas/lots.ts';
+import { withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
+import { withTransaction, type Unit } from '#server/database/transaction.ts';
+import type { Deal } from '#server/models/deal.ts';
+import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
+import { presentContestedDeals, presentDeal } from './deal-presenter.ts';
+import { findDealIds, listContestedDeals, loadDealView } from './deal-queries.ts';
+import { freezeDeal, unfreezeDeal } from './freeze-deal.ts';
+import { ruleDeal } from './rule-deal.ts';
+
+type DealParams = z.infer<typeof dealParams>;
+
+async function changeDeal(
+  code: string,
+  actor: Actor,
+  change: (dealId: string, unit: Unit) => Promise<Deal>,
+): Promise<DealAnswer> {
+  const { id } = await findDealIds(code);
+  return withTransaction({ deals: [id] }, async (unit) => {
+    await change(id, unit);
+    return presentDeal(await loadDealView(id, unit.tx), actor, unit.now);
+  });
+}
+
+export const deskDealRoutes: RouteDefinition[] = [
+  defineRoute({
+    method: 'get',
+    path: '/api/v1/desk/deals',
+    summary: 'Contested deals, the oldest first',
+    access: 'desk',
+    limit: 'read',
+    answer: deskDealsAnswer,
+    handle: async ({ actor, res }) => {
+      res.json(presentContestedDeals(await listContestedDeals(), actor));
+    },
+  }),
+  defineRoute<DealParams, unknown, z.infer<typeof rulingRequest>>({
+    method: 'post',
+    path: '/api/v1/desk/deals/:code/ruling',
+    summary: 'Rule on a contested deal: refund in full or release',
+    access: 'desk',
+    limit: 'write',
+    movesMoney: true,
+    params: dealParams,
+    body: rulingRequest,
+    answer: dealAnswer,
+    handle: async ({ params, body, actor, idempotency, res }) => {
+      const { id, lotId } = await findDealIds(params.code);
+      const locks = { lots: [lotId], deals: [id] };
+      const { status, answer } = await withIdempotentTransaction(idempotency, locks, async (unit) => {
+        await ruleDeal({ ...body, dealId: id }, unit, actor);
+        const view = await loadDealView(id, unit.tx);
+        return { status: 200, answer: presentDeal(view, actor, unit.now) };
+      });
+      res.status(status).json(answer);
+    },
+  }),
+  defineRoute<DealParams, unknown, z.infer<typeof reasonRequest>>({
+    method: 'post',
+    path: '/api/v1/desk/deals/:code/freeze',
+    summary: 'Stop a deal that money is held for, with a reason',
+    access: 'desk',
+    limit: 'write',
+    params: dealParams,
+    body: reasonRequest,
+    answer: dealAnswer,
+    handle: async ({ params, body, actor, res }) => {
+      res.json(
+        await changeDeal(params.code, actor, (dealId, unit) => freezeDeal({ ...body, dealId }, unit, actor)),
+      );
+    },
+  }),
+  defineRoute<DealParams>({
+    method: 'post',
+    path: '/api/v1/desk/deals/:code/unfreeze',
+    summary: 'Lift a freeze; the running deadline is moved by its length',
+    access: 'desk',
+    limit: 'write',
+    params: dealParams,
+    answer: dealAnswer,
+    handle: async ({ params, actor, res }) => {
+      res.json(await changeDeal(params.code, actor, (dealId, unit) => unfreezeDeal(dealId, unit, actor)));
+    },
+  }),
+];
