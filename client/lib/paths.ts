@@ -22,6 +22,8 @@ export const paths = {
 
 /** Where to go after signing in: only ever an address of our own, so that a link cannot send a member elsewhere. */
 export function safeNext(next: string | null): string {
-  const isOwn = next !== null && /^\/(?![/\\])/.test(next) && !/[\\\u0000-\u001f]/.test(next);
-  return isOwn ? next : paths.home();
+  if (next === null || !/^\/(?![/\\])/.test(next)) return paths.home();
+  // Browsers drop control characters and read a backslash as a slash: "/\t/elsewhere" would leave the site.
+  const isPlain = [...next].every((character) => character > ' ' && character !== '\\');
+  return isPlain ? next : paths.home();
 }

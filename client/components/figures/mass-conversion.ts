@@ -1,10 +1,12 @@
+import { dec } from '#shared/decimal.ts';
 import { massInUnits, READING_UNITS, type ReadingUnit } from '#shared/mass-in-units.ts';
-import { toGrams, type MassEntry } from '#shared/mass.ts';
+import { GRAMS_PER_UNIT, type MassEntry } from '#shared/mass.ts';
 
-/** A mass in another unit, for reading; in the unit in which it was entered it is told as it was typed. */
+/** A valid mass in another unit, for reading (what is being typed goes through `parse-mass-text.ts` first); in the unit in which it was entered it is told as it was typed. */
 export function massIn(entry: MassEntry, unit: ReadingUnit): string {
   if (entry.unit === unit) return entry.value;
-  return massInUnits(toGrams(entry), unit)[0]?.value ?? entry.value;
+  const grams = dec(entry.value).times(GRAMS_PER_UNIT[entry.unit]);
+  return massInUnits(grams, unit)[0]?.value ?? entry.value;
 }
 
 /** The reader's unit first, then the others. */
