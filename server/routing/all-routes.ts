@@ -6,6 +6,14 @@ import { deskMemberRoutes } from '#server/features/desk/desk-member-routes.ts';
 import { laboratoryRoutes } from '#server/features/laboratories/laboratory-routes.ts';
 import { quoteRoutes } from '#server/features/quotes/quote-routes.ts';
 import { sessionRoutes } from '#server/features/members/session-routes.ts';
+import { onboardingRoutes } from '#server/features/onboarding/onboarding-routes.ts';
+import { paymentRoutes } from '#server/features/payments/payment-routes.ts';
+import { webhookRoutes } from '#server/features/payments/webhook-routes.ts';
+import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
+import { lotRoutes } from '#server/features/lots/lot-routes.ts';
+import { photoRoutes } from '#server/features/photos/photo-routes.ts';
+import { registerRoutes } from '#server/features/register/register-routes.ts';
+import { valuationRoutes } from '#server/features/valuations/valuation-routes.ts';
 import type { RouteDefinition } from './define-route.ts';
 
 /** Every route of the product. A test walks the mounted router and fails on one that does not stand here. */
@@ -18,4 +26,12 @@ export const allRoutes: readonly RouteDefinition[] = [
   ...caseRoutes,
   ...deskMemberRoutes,
   ...auditRoutes,
+  ...onboardingRoutes,
+  ...paymentRoutes,
+  ...webhookRoutes,
+  ...registerRoutes,
+  ...lotRoutes,
+  ...photoRoutes,
+  ...documentRoutes,
+  ...valuationRoutes,
 ];

@@ -272,3 +272,28 @@ export const myLotsAnswer = z.object({
   ),
 });
 export type MyLotsAnswer = z.infer<typeof myLotsAnswer>;
+
+/** The commission of each payment method that is valid now. */
+export const feeScheduleAnswer = z.object({
+  rates: z.array(
+    z.object({
+      method: netByMethod.shape.method,
+      percent: decimalString,
+      minimum: moneySchema,
+      validFrom: instant,
+    }),
+  ),
+});
+export type FeeScheduleAnswer = z.infer<typeof feeScheduleAnswer>;
+
+/** A certificate's document after upload: the draft already refers to it. */
+export const certificateFileAnswer = z.object({
+  fileId: z.uuid(),
+  fileName: z.string(),
+  mediaType: z.string(),
+  byteCount: z.number().int(),
+});
+export type CertificateFileAnswer = z.infer<typeof certificateFileAnswer>;
+
+export const photosAnswer = z.object({ photos: z.array(photoAnswer) });
+export type PhotosAnswer = z.infer<typeof photosAnswer>;

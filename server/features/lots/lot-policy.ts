@@ -1,0 +1,53 @@
+import { canLotBecome, PUBLIC_LOT_STATES, type LotState } from '#shared/lot-states.ts';
+import { isDeskStaff } from '#shared/roles.ts';
+import type { Actor } from '#server/routing/define-route.ts';
+import type { Lot } from '#server/models/lot.ts';
+
+type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'>;
+type Viewer = Pick<Actor, 'id' | 'role' | 'suspendedAt'> | null;
+
+export function isSeller(viewer: Viewer, lot: Pick<Lot, 'sellerId'>): boolean {
+  return viewer !== null && viewer.id === lot.sellerId;
+}
+
+/** Open, reserved and sold lots are anyone's to see; the others are the seller's, the desk's and the buyer's of its deal. */
+export function canSeeLot(viewer: Viewer, lot: LotRow, isBuyer = false): boolean {
+  if (PUBLIC_LOT_STATES.includes(lot.state) || isSeller(viewer, lot) || isBuyer) return true;
+  return viewer !== null && isDeskStaff(viewer.role) && lot.state !== 'draft';
+}
+
+/** Laboratories report on cases and do nothing else here. */
+export function canDraftLots(viewer: Viewer): boolean {
+  return viewer !== null && viewer.role !== 'lab' && viewer.suspendedAt === null;
+}
+
+export type LotRights = Record<
+  'edit' | 'submit' | 'redraft' | 'changePrice' | 'withdraw' | 'pause' | 'reopen' | 'copy' | 'buy' | 'pull',
+  boolean
+>;
+
+const PULLABLE: readonly LotState[] = ['submitted', 'open', 'paused'];
+
+/** What a viewer may do with a lot as it stands; the commands ask the same questions again. */
+export function lotRights(viewer: Viewer, lot: LotRow): LotRights {
+  const isOwn = isSeller(viewer, lot);
+  const mayChange = isOwn && canDraftLots(viewer);
+  const mayBuy = viewer !== null && viewer.role !== 'lab' && viewer.suspendedAt === null;
+  return {
+    edit: mayChange && lot.state === 'draft',
+    submit: mayChange && lot.state === 'draft',
+    redraft: mayChange && lot.state === 'returned',
+    changePrice: mayChange && lot.state === 'open',
+    withdraw: mayChange && canLotBecome(lot.state, 'withdrawn'),
+    pause: mayChange && lot.state === 'open',
+    reopen: mayChange && lot.state === 'paused',
+    copy: mayChange && lot.state !== 'draft',
+    buy: mayBuy && !isOwn && lot.state === 'open',
+    pull: viewer !== null && isDeskStaff(viewer.role) && !isOwn && PULLABLE.includes(lot.state),
+  };
+}
+
+/** A draft that the desk has never seen leaves nothing behind; what it has seen keeps its history. */
+export function canDeleteDraft(viewer: Viewer, lot: LotRow): boolean {
+  return isSeller(viewer, lot) && lot.state === 'draft' && lot.assayVersion === 0;
+}

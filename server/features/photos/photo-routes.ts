@@ -1,0 +1,139 @@
+import { pipeline } from 'node:stream/promises';
+import type { Response } from 'express';
+import { z } from 'zod';
+import { PHOTO_BYTES_MAX } from '#shared/limits.ts';
+import { PUBLIC_LOT_STATES } from '#shared/lot-states.ts';
+import {
+  lotParams,
+  photoAnswer,
+  photoCaptionRequest,
+  photoOrderRequest,
+  photosAnswer,
+} from '#shared/schemas/lots.ts';
+import { NotFoundError } from '#server/app-error.ts';
+import { withTransaction } from '#server/database/transaction.ts';
+import { presentPhoto } from '#server/features/lots/lot-presenter.ts';
+import { findLotPhotos, findVisibleLot } from '#server/features/lots/lot-queries.ts';
+import { lotIdOf } from '#server/features/lots/own-lot.ts';
+import { storage } from '#server/integrations/storage.ts';
+import { receivedFile, receiveFile } from '#server/middleware/receive-file.ts';
+import { LotPhoto } from '#server/models/lot-photo.ts';
+import { StoredFile } from '#server/models/stored-file.ts';
+import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
+import { captionPhoto, orderPhotos, removePhoto } from './change-photos.ts';
+import { photoSizeKey } from './photo-files.ts';
+import { PHOTO_MEDIA_TYPE, PHOTO_SIZES, type PhotoSize } from './process-photo.ts';
+import { removeFiles } from './remove-files.ts';
+import { uploadPhoto } from './upload-photo.ts';
+
+const PHOTOS = '/api/v1/lots/:code/photos';
+const photoParams = lotParams.extend({ id: z.uuid() });
+const sizeParams = z.object({
+  id: z.uuid(),
+  size: z.enum(PHOTO_SIZES.map(String) as [string, ...string[]]),
+});
+
+async function answerPhotos(lotId: string, res: Response): Promise<void> {
+  res.json({ photos: (await findLotPhotos(lotId)).map(presentPhoto) });
+}
+
+async function sendPhoto(id: string, size: PhotoSize, viewer: Actor | null, res: Response): Promise<void> {
+  const photo = await LotPhoto.findByPk(id, { include: [{ model: StoredFile, as: 'file' }] });
+  if (photo === null || photo.file === undefined) throw new NotFoundError();
+  const { lot } = await findVisibleLot({ id: photo.lotId }, viewer);
+  const bytes = await storage.get(photoSizeKey(photo.file.storageKey, size));
+  if (bytes === null) throw new NotFoundError();
+  const isPublic = PUBLIC_LOT_STATES.includes(lot.state);
+  res.set({
+    'Content-Type': PHOTO_MEDIA_TYPE,
+    'Cache-Control': isPublic ? 'public, max-age=31536000, immutable' : 'private, no-store',
+    'Content-Security-Policy': "default-src 'none'; sandbox",
+    'X-Content-Type-Options': 'nosniff',
+  });
+  await pipeline(bytes, res);
+}
+
+const writeRoutes: RouteDefinition[] = [
+  defineRoute({
+    method: 'post',
+    path: PHOTOS,
+    summary: 'Adds one photo to a draft; encoded anew in three sizes, without metadata',
+    access: 'member',
+    limit: 'upload',
+    params: lotParams,
+    answer: photoAnswer,
+    before: [receiveFile(PHOTO_BYTES_MAX, 'photo-too-large')],
+    handle: async ({ params, req, res, actor }) => {
+      const lotId = await lotIdOf(params.code);
+      const photo = await uploadPhoto(lotId, receivedFile(req), actor);
+      res.status(201).json(presentPhoto(photo));
+    },
+  }),
+  // Before the routes with an id in the same place.
+  defineRoute({
+    method: 'put',
+    path: `${PHOTOS}/order`,
+    summary: 'Puts the photos of a draft in order',
+    access: 'member',
+    limit: 'write',
+    params: lotParams,
+    body: photoOrderRequest,
+    answer: photosAnswer,
+    handle: async ({ params, body, res, actor }) => {
+      const lotId = await lotIdOf(params.code);
+      await withTransaction({ lots: [lotId] }, (unit) => orderPhotos({ lotId, ...body }, unit, actor));
+      await answerPhotos(lotId, res);
+    },
+  }),
+  defineRoute({
+    method: 'put',
+    path: `${PHOTOS}/:id/caption`,
+    summary: 'Writes the caption of a photo',
+    access: 'member',
+    limit: 'write',
+    params: photoParams,
+    body: photoCaptionRequest,
+    answer: photosAnswer,
+    handle: async ({ params, body, res, actor }) => {
+      const lotId = await lotIdOf(params.code);
+      await withTransaction({ lots: [lotId] }, (unit) =>
+        captionPhoto({ lotId, photoId: params.id, ...body }, unit, actor),
+      );
+      await answerPhotos(lotId, res);
+    },
+  }),
+  defineRoute({
+    method: 'delete',
+    path: `${PHOTOS}/:id`,
+    summary: 'Removes a photo from a draft, row and files',
+    access: 'member',
+    limit: 'write',
+    params: photoParams,
+    answer: photosAnswer,
+    handle: async ({ params, res, actor }) => {
+      const lotId = await lotIdOf(params.code);
+      const files = await withTransaction({ lots: [lotId] }, (unit) =>
+        removePhoto({ lotId, photoId: params.id }, unit, actor),
+      );
+      await removeFiles(files);
+      await answerPhotos(lotId, res);
+    },
+  }),
+];
+
+export const photoRoutes: RouteDefinition[] = [
+  ...writeRoutes,
+  defineRoute({
+    method: 'get',
+    path: '/api/v1/photos/:id/:size',
+    summary: 'A photo in one of its sizes, to whoever may see its lot',
+    access: 'public',
+    limit: 'read',
+    params: sizeParams,
+    handle: async ({ params, res, viewer }) => {
+      const size = PHOTO_SIZES.find((known) => String(known) === params.size);
+      if (size === undefined) throw new NotFoundError();
+      await sendPhoto(params.id, size, viewer, res);
+    },
+  }),
+];
