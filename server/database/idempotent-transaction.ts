@@ -88,3 +88,10 @@ export async function withIdempotentTransaction(
     throw error;
   }
 }
+
+/** The answer that a request has had before under its key, for a write that asks a hosted service between two transactions. */
+export async function storedAnswer(ticket: IdempotencyTicket | null): Promise<StoredAnswer | null> {
+  invariant(ticket !== null, 'a route that moves money has an idempotency key');
+  const stored = await readStored(ticket, null);
+  return stored === null ? null : rethrowIfBurnt(stored);
+}

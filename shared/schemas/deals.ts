@@ -86,6 +86,12 @@ export const DEAL_STATE_VALUES = [
   'reversed',
 ] as const;
 
+/** How deal and payment stand after the provider was asked. */
+export const refreshPaymentAnswer = z.object({
+  state: z.enum(DEAL_STATE_VALUES),
+  payment: z.enum(['none', 'starting', 'open', 'paid', 'expired']),
+});
+
 export const dealEventAnswer = z.object({
   at: instant,
   act: z.string(),
