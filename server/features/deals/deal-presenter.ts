@@ -23,7 +23,7 @@ type Who = Pick<Actor, 'id' | 'role'>;
 const usd = (minor: bigint): MoneyAnswer => ({ currency: 'USD', amount: minorToAmount(minor) });
 const iso = (moment: Date | null | undefined): string | null => moment?.toISOString() ?? null;
 const thumbUrl = (photoId: string | null): string | null =>
-  photoId === null ? null : `/api/v1/photos/${photoId}/thumb`;
+  photoId === null ? null : `/api/v1/photos/${photoId}/240`;
 
 /** The seller's sheet carries the commission, which is not the buyer's business. */
 export function sheetFor(side: DealSide, stored: DealSheet): SettlementSheet {

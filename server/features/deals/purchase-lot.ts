@@ -1,6 +1,7 @@
 import { UniqueConstraintError } from 'sequelize';
 import { MeasureError } from '#shared/domain-error.ts';
 import { fromAmount } from '#shared/money.ts';
+import { RULES_VERSION } from '#shared/rules-version.ts';
 import type { PurchaseRequest } from '#shared/schemas/deals.ts';
 import { commissionFor } from '#shared/settlement/commission.ts';
 import {
@@ -24,9 +25,6 @@ import type { Actor } from '#server/routing/define-route.ts';
 import { fundByFrom } from './deadlines.ts';
 import { sheetInputFor, storeDealSheets } from './deal-sheets.ts';
 import { recordAgreement } from './move-deal.ts';
-
-/** The rules that buyer and seller confirm; a change of their text is a new version. */
-export const RULES_VERSION = '2026-12';
 
 export type PurchaseInput = Pick<PurchaseRequest, 'total' | 'delivery'> & { lotId: string };
 
