@@ -54,9 +54,15 @@ function momentText(at: Date | string, timeZone: string): string {
   return `${format(new TZDate(new Date(at).getTime(), timeZone), 'd MMMM yyyy, HH:mm')} (${timeZone})`;
 }
 
-/** The subset fonts have no subscripts, fractions or ellipses beyond Latin; what they lack would print as an empty box. */
+/** What the embedded Latin faces can draw; anything else would print as an empty box. */
+const UNDRAWN = /[^\u0020-\u007e\u00a0-\u00ff\u2013\u2014\u2018-\u201d\u2026\u2212]/gu;
+
+/** Letters beyond Latin-1 lose their marks; what has no plain letter becomes a question mark. */
 function printable(text: string): string {
-  return text.replaceAll('…', '...').replaceAll('‰', ' per mille');
+  return text
+    .replace(/\s*‰/g, ' per mille')
+    .replace(UNDRAWN, (sign) => sign.normalize('NFD').replace(/\p{M}/gu, ''))
+    .replace(UNDRAWN, '?');
 }
 
 function write(doc: Doc, face: Face, size: number, colour: string): Doc {
