@@ -5,6 +5,7 @@ export const paths = {
   home: () => '/',
   register: () => '/lots',
   lot: (code: string) => `/lots/${segment(code)}`,
+  purchase: (code: string) => `/lots/${segment(code)}/buy`,
   sell: () => '/sell',
   draft: (code: string) => `/sell/${segment(code)}`,
   deals: () => '/deals',

@@ -14,7 +14,7 @@ const base = { low: 92, high: 104 };
 function touch(a: PlacedLabel, b: PlacedLabel): boolean {
   if (a.lane === b.lane) return a.left < b.right && b.left < a.right;
   const [upper, lower] = a.lane > b.lane ? [a, b] : [b, a];
-  return upper.x > lower.left && upper.x < lower.right;
+  return upper.hasLeader && upper.x > lower.left && upper.x < lower.right;
 }
 
 describe('the window of the melt rule', () => {
@@ -62,7 +62,9 @@ describe('the window of the melt rule', () => {
 
 describe('labels on the melt rule', () => {
   it('stand alone in the lowest lane', () => {
-    expect(placeLabels([{ key: 'price', text: 'price 98.20 %', x: 100 }], 500)[0]?.lane).toBe(0);
+    expect(
+      placeLabels([{ key: 'price', text: 'price 98.20 %', x: 100, hasLeader: true }], 500)[0]?.lane,
+    ).toBe(0);
   });
 
   it('keep clear of each other and of the edges, wherever four marks and a band stand', () => {
@@ -70,10 +72,10 @@ describe('labels on the melt rule', () => {
     fc.assert(
       fc.property(fc.tuple(x, x, x, x), ([price, reserve, limit, band]) => {
         const requests: LabelRequest[] = [
-          { key: 'price', text: 'price 98.20 %', x: price },
-          { key: 'reserve', text: 'reserve 95.00 %', x: reserve },
-          { key: 'limit', text: 'your limit 96.20 %', x: limit },
-          { key: 'band', text: '95 % range 99.96 to 100.04 %', x: band },
+          { key: 'price', text: 'price 98.20 %', x: price, hasLeader: true },
+          { key: 'reserve', text: 'reserve 95.00 %', x: reserve, hasLeader: true },
+          { key: 'limit', text: 'your limit 96.20 %', x: limit, hasLeader: true },
+          { key: 'band', text: '95 % range 99.96 to 100.04 %', x: band, hasLeader: false },
         ];
         // Marks closer than a leader's clearance cannot both be led to without touching.
         const sorted = [price, reserve, limit, band].sort((a, b) => a - b);

@@ -72,7 +72,8 @@ export function ruleTicks(window: RuleWindow, width: number): Tick[] {
   return ticks;
 }
 
-export type LabelRequest = { key: string; text: string; x: number };
+/** The band shows itself: its label has no leader, which leaves room for the marks on a narrow rule. */
+export type LabelRequest = { key: string; text: string; x: number; hasLeader: boolean };
 export type PlacedLabel = LabelRequest & {
   lane: number;
   anchor: 'start' | 'end';
@@ -89,7 +90,7 @@ const SEARCH_STEPS_MOST = 20_000;
 function clash(a: PlacedLabel, b: PlacedLabel): boolean {
   if (a.lane === b.lane) return a.left < b.right + GAP && b.left < a.right + GAP;
   const [upper, lower] = a.lane > b.lane ? [a, b] : [b, a];
-  return upper.x > lower.left - 4 && upper.x < lower.right + 6;
+  return upper.hasLeader && upper.x > lower.left - 4 && upper.x < lower.right + 6;
 }
 
 function candidate(request: LabelRequest, lane: number, anchor: 'start' | 'end'): PlacedLabel {

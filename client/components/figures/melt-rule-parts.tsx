@@ -90,22 +90,23 @@ function isFreeOf(meltX: number, x: number, width: number): boolean {
 /** A label with its leader down to what it names. */
 export function RuleLabel({ label, lineY }: { label: PlacedLabel; lineY: number }) {
   const baseline = lineY - 28 - label.lane * LANE_HEIGHT;
-  const isBand = label.key === 'band';
   return (
     <g>
-      <line
-        x1={label.x}
-        x2={label.x}
-        y1={baseline - 9}
-        y2={lineY - (isBand ? 20 : 15)}
-        className="stroke-line"
-        strokeWidth="0.8"
-      />
+      {label.hasLeader && (
+        <line
+          x1={label.x}
+          x2={label.x}
+          y1={baseline - 9}
+          y2={lineY - 15}
+          className="stroke-line"
+          strokeWidth="0.8"
+        />
+      )}
       <text
         x={label.x + (label.anchor === 'start' ? 4 : -4)}
         y={baseline}
         textAnchor={label.anchor}
-        className={isBand ? 'fill-ink-2 text-[12px]' : 'fill-ink text-[12px] font-medium'}
+        className={label.hasLeader ? 'fill-ink text-[12px] font-medium' : 'fill-ink-2 text-[12px]'}
       >
         {label.text}
       </text>

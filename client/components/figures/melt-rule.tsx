@@ -87,11 +87,11 @@ function labelRequests(scale: RuleScale, band: MeltBand | null, marks: MeltMark[
   const requests = marks.map((mark) => {
     const percent = place(mark.percent);
     const off = scale.isInside(percent) ? '' : percent < 100 ? '← ' : '→ ';
-    return { key: mark.kind as string, text: off + markLabel(mark), x: scale.x(percent) };
+    return { key: mark.kind as string, text: off + markLabel(mark), x: scale.x(percent), hasLeader: true };
   });
   if (band) {
     const middle = (scale.x(place(band.low)) + scale.x(place(band.high))) / 2;
-    requests.push({ key: 'band', text: bandLabel(band), x: middle });
+    requests.push({ key: 'band', text: bandLabel(band), x: middle, hasLeader: false });
   }
   return requests;
 }
