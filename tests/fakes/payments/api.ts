@@ -59,7 +59,7 @@ function sendError(response: Response, error: unknown): void {
     response.status(error.status).json({ error: error.body });
     return;
   }
-  console.error(error);
+  process.stderr.write(`${error instanceof Error ? error.stack : String(error)}\n`);
   response.status(500).json({ error: { type: 'api_error', message: 'The stand-in itself failed.' } });
 }
 

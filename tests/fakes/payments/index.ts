@@ -21,7 +21,7 @@ const fake = await startPaymentsFake({
   settlementDelaySeconds: integer('FAKE_SETTLEMENT_DELAY_SECONDS', 0),
   payoutDelaySeconds: integer('FAKE_PAYOUT_DELAY_SECONDS', 5),
 });
-console.log(`Test payments on ${fake.url}`);
+process.stdout.write(`Test payments on ${fake.url}\n`);
 
 let isStopping = false;
 function stop(): void {

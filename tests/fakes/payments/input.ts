@@ -1,5 +1,6 @@
 import { z } from 'zod';
-import { ApiError, invalidRequest } from './errors.ts';
+import { invalidRequest } from './errors.ts';
+import type { ApiError } from './errors.ts';
 
 /** Form bodies hold only strings; these read the few types that the API knows. */
 export const text = z.string().min(1);

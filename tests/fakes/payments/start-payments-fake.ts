@@ -102,7 +102,7 @@ function lastResort(error: unknown, _request: Request, response: Response, next:
     response.status(status).json({ error: 'the request could not be read' });
     return;
   }
-  console.error(error);
+  process.stderr.write(`${error instanceof Error ? error.stack : String(error)}\n`);
   response.status(500).json({ error: 'the stand-in itself failed' });
 }
 

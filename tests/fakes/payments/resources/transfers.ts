@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import type { z } from 'zod';
 import type Stripe from 'stripe';
 import { balanceOf, moveBetween } from '../balances.ts';
 import { endpoint, find, findAccount, pathId } from '../endpoint.ts';
