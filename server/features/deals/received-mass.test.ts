@@ -1,0 +1,43 @@
+import { describe, expect, it } from 'vitest';
+import { compareReceivedMass } from './received-mass.ts';
+
+const lot = { grossValue: '31.62', grossUnit: 'g', readabilityValue: '0.01', readabilityUnit: 'g' };
+
+describe('compareReceivedMass', () => {
+  it('agrees with the same reading', () => {
+    expect(compareReceivedMass(lot, { value: '31.62', unit: 'g' })).toEqual({
+      differenceGrams: '0',
+      isWithinScales: true,
+    });
+  });
+
+  it('allows what a coarser scale cannot tell', () => {
+    // k = 2 times the root of 0.01²/12 + 0.1²/12 = 0.058 g
+    expect(compareReceivedMass(lot, { value: '31.6', unit: 'g' })).toEqual({
+      differenceGrams: '-0.02',
+      isWithinScales: true,
+    });
+    expect(compareReceivedMass(lot, { value: '31.7', unit: 'g' }).isWithinScales).toBe(false);
+  });
+
+  it('sees a difference beyond both scales', () => {
+    expect(compareReceivedMass(lot, { value: '31.60', unit: 'g' })).toEqual({
+      differenceGrams: '-0.02',
+      isWithinScales: false,
+    });
+  });
+
+  it('compares across units exactly', () => {
+    const ounce = { grossValue: '1', grossUnit: 'ozt', readabilityValue: '0.001', readabilityUnit: 'ozt' };
+    expect(compareReceivedMass(ounce, { value: '31.103477', unit: 'g' })).toEqual({
+      differenceGrams: '0',
+      isWithinScales: true,
+    });
+  });
+
+  it('takes the last digit typed where the lot gives no readability', () => {
+    const silent = { ...lot, readabilityValue: null, readabilityUnit: null };
+    expect(compareReceivedMass(silent, { value: '31.625', unit: 'g' }).isWithinScales).toBe(true);
+    expect(compareReceivedMass(silent, { value: '31.635', unit: 'g' }).isWithinScales).toBe(false);
+  });
+});
