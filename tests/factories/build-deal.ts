@@ -1,5 +1,4 @@
 import { randomBytes } from 'node:crypto';
-import { METALS, type Metal } from '#shared/metals.ts';
 import { minorToAmount } from '#shared/money.ts';
 import type { DeliveryAddress } from '#shared/schemas/deals.ts';
 import { databaseNow, withTransaction, type Unit } from '#server/database/transaction.ts';
@@ -12,7 +11,6 @@ import { recordTracking } from '#server/features/parcels/record-tracking.ts';
 import { fundDeal } from '#server/features/payments/fund-deal.ts';
 import { openCheckout, prepareCheckout } from '#server/features/payments/prepare-checkout.ts';
 import { newestQuotes } from '#server/features/quotes/quote-queries.ts';
-import { storeReading } from '#server/features/quotes/store-reading.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { buildLot } from './build-lot.ts';
@@ -28,19 +26,6 @@ export const DELIVERY: DeliveryAddress = {
   country: 'US',
   phone: '+1 555 0142',
 };
-
-const RATES: Readonly<Record<Metal, string>> = { Au: '4182.40', Ag: '51.125', Pt: '1604.00', Pd: '1392.50' };
-
-/** One accepted quote of each metal at the database's time, unless there is one. */
-export async function buildQuotes(): Promise<void> {
-  const now = await databaseNow();
-  const known = await newestQuotes(now);
-  for (const metal of METALS) {
-    if (known.byMetal[metal] !== undefined) continue;
-    const reading = { metal, mid: RATES[metal], bid: null, ask: null, at: now };
-    await withTransaction({}, (unit) => storeReading(reading, 'test', true, unit));
-  }
-}
 
 /** Steps of the usual way, and the two ends that a buyer can bring about. */
 export type BuiltState = 'agreed' | 'funded' | 'shipped' | 'delivered' | 'settled' | 'contested';
@@ -133,7 +118,6 @@ async function advance(built: BuiltDeal, step: BuiltState, hasReceipt: boolean):
 /** A deal with its own seller, lot and buyer, brought to the state by the product's own commands. */
 export async function buildDeal(wishes: Wishes = {}): Promise<BuiltDeal> {
   const { state = 'agreed' } = wishes;
-  await buildQuotes();
   const seller = wishes.seller ?? (await buildMember({ canSell: true }));
   const buyer = wishes.buyer ?? (await buildMember());
   const made = await buildLot({ state: 'open', sellerId: seller.id });

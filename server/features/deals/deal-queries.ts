@@ -66,7 +66,7 @@ async function thumbOf(lotId: string, tx?: Transaction): Promise<string | null> 
 
 async function certificateOf(lotId: string, tx?: Transaction): Promise<string | null> {
   const certificate = await Certificate.findOne({
-    where: { lotId, state: 'verified' },
+    where: { lotId, state: { [Op.notIn]: ['returned', 'superseded'] } },
     order: [['assayVersion', 'DESC']],
     attributes: ['id'],
     ...within(tx),
@@ -136,18 +136,4 @@ export async function findUnshippedDeals(now: Date): Promise<{ id: string; lotId
     order: [['shipBy', 'ASC']],
     limit: 500,
   });
-}
-
-/** True once the buyer of this lot may read its certificate: his deal has been funded. */
-export async function hasFundedDealOn(lotId: string, memberId: string): Promise<boolean> {
-  const count = await Deal.count({ where: { lotId, buyerId: memberId, fundedAt: { [Op.ne]: null } } });
-  return count > 0;
-}
-
-/** The stored sheet of a moment for one side, and the deal it belongs to. */
-export async function findDealSheet(
-  dealId: string,
-  moment: 'provisional' | 'final',
-): Promise<DealSheet | null> {
-  return DealSheet.findOne({ where: { dealId, moment } });
 }
