@@ -61,13 +61,19 @@ export function completeDraft(now: Date, wishes: Omit<Wishes, 'state' | 'sellerI
   const { metal = 'Au', permille = '995.2', gross = '31.20' } = wishes;
   const fineness = { value: permille, unit: 'permille' };
   const uncertainty = { value: '0.5', unit: 'permille' };
+  const main = { metal, fineness, uncertainty, method: 'fire_assay', paidFor: true };
+  const contents = wishes.draft?.contents ?? [main];
+  // The report gives every metal that the lot is paid for.
+  const results = contents
+    .filter(({ paidFor }) => paidFor)
+    .map(({ metal: element, paidFor: _, ...result }) => ({ element, ...result }));
   return lotDraft.parse({
     form: 'button',
     title: 'Button from the bench',
     description: 'Melted once, poured, one sample drilled.',
     gross: { value: gross, unit: 'g' },
     readability: { value: '0.01', unit: 'g' },
-    contents: [{ metal, fineness, uncertainty, method: 'fire_assay', paidFor: true }],
+    contents,
     price: wishes.price ?? '1900.00',
     shipping: '25.00',
     destinations: ['US', 'CA'],
@@ -77,7 +83,7 @@ export function completeDraft(now: Date, wishes: Omit<Wishes, 'state' | 'sellerI
       issuedOn: dayOf(daysLater(now, -10)),
       sampling: 'laboratory',
       itemMass: { value: gross, unit: 'g' },
-      results: [{ element: metal, fineness, uncertainty, method: 'fire_assay' }],
+      results,
     },
     confirmsCautions: true,
     confirmsTitle: true,
