@@ -4,7 +4,15 @@ import { matchRoutes, type RouteObject } from 'react-router-dom';
  * The rooms of the house, one line per address. A route module exports `Component` and, as it needs them, `loader`
  * and `ErrorBoundary`. A line is added only when its module works: navigation and footer show no room that is not here.
  */
-export const pageRoutes: RouteObject[] = [{ path: '/', lazy: () => import('../routes/home.tsx') }];
+export const pageRoutes: RouteObject[] = [
+  { path: '/', lazy: () => import('../routes/home.tsx') },
+  { path: '/desk', lazy: () => import('../routes/desk-queue.tsx') },
+  { path: '/desk/certificates/:id', lazy: () => import('../routes/desk-case.tsx') },
+  { path: '/desk/deals', lazy: () => import('../routes/desk-deals.tsx') },
+  { path: '/desk/laboratories', lazy: () => import('../routes/desk-laboratories.tsx') },
+  { path: '/desk/members', lazy: () => import('../routes/desk-members.tsx') },
+  { path: '/desk/audit', lazy: () => import('../routes/desk-audit.tsx') },
+];
 
 export const notFoundRoute: RouteObject = { path: '*', lazy: () => import('../routes/not-found.tsx') };
 
