@@ -20,7 +20,12 @@ import type {
   TransferReading,
 } from './payment-readings.ts';
 
-export type PaymentConfiguration = { secretKey: string; webhookSecret: string; apiBase: string };
+export type PaymentConfiguration = {
+  secretKey: string;
+  webhookSecret: string;
+  apiBase: string;
+  timeoutMs?: number;
+};
 
 export type CheckoutOrder = {
   dealId: string;
@@ -41,8 +46,8 @@ const SIGNATURE_SECONDS_MAX = 300;
 const FUTURE_SECONDS_MAX = 60;
 const LIST_LIMIT = 100;
 
-function connect({ secretKey, apiBase }: PaymentConfiguration): Stripe {
-  const limits = { telemetry: false, timeout: TIMEOUT_MS, maxNetworkRetries: RETRIES_MAX };
+function connect({ secretKey, apiBase, timeoutMs = TIMEOUT_MS }: PaymentConfiguration): Stripe {
+  const limits = { telemetry: false, timeout: timeoutMs, maxNetworkRetries: RETRIES_MAX };
   if (apiBase === '') return new Stripe(secretKey, limits);
   const base = new URL(apiBase);
   const protocol = base.protocol === 'http:' ? 'http' : 'https';

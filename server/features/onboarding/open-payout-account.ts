@@ -15,7 +15,10 @@ export async function openPayoutAccount(
   await openMemberAccounts(memberId, unit);
   const known = await PayoutAccount.findOne({ where: { memberId }, transaction: unit.tx });
   if (known !== null) return known;
-  return PayoutAccount.create({ id: newId(), memberId, requirements: [] }, { transaction: unit.tx });
+  return PayoutAccount.create(
+    { id: newId(), memberId, providerAccountId: null, requirements: [] },
+    { transaction: unit.tx },
+  );
 }
 
 /** Second half: keeps the id of the account at the provider. The first one stays. Locks: the member is held by the caller. */

@@ -39,7 +39,16 @@ export async function prepareCheckout({ dealId }: { dealId: string }, unit: Unit
   const expiresAt = expiryOf(deal, unit.now);
   if (payment === null) {
     return Payment.create(
-      { id: newId(), dealId, state: 'starting', amountMinor: deal.totalMinor, expiresAt },
+      {
+        id: newId(),
+        dealId,
+        state: 'starting',
+        attempt: 1,
+        providerSessionId: null,
+        sessionUrl: null,
+        amountMinor: deal.totalMinor,
+        expiresAt,
+      },
       { transaction: unit.tx },
     );
   }

@@ -32,6 +32,8 @@ function expandPath(fake: Fake, node: unknown, parts: string[], whole: string): 
     return;
   }
   if (!isTree(node)) return;
+  // What is not there yet, such as the payment of an open session, stays null when it is asked for in full.
+  if (node[name] === null) return;
   const value = node[name] ?? hiddenList(fake, node, name);
   if (value === undefined) {
     throw invalidRequest(`This property cannot be expanded (${whole}).`, undefined, 'expand');
