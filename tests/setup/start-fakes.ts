@@ -12,7 +12,7 @@ function portOf(name: string): number {
  * to the product's own port unless `webhookUrl` names another place.
  */
 export async function startFakes(options: { webhookUrl?: string } = {}) {
-  const webhookUrl = options.webhookUrl ?? `http://127.0.0.1:${process.env.PORT}/api/v1/webhooks/payments`;
+  const webhookUrl = options.webhookUrl ?? `http://127.0.0.1:${process.env.PORT}/api/v1/webhooks/stripe`;
   const payments = await startPaymentsFake({
     port: portOf('STRIPE_API_BASE'),
     webhookUrl,

@@ -78,7 +78,7 @@ export function fakeProcesses({ ports, secrets }) {
   });
   return [
     one('payments', ports.payments, {
-      FAKE_WEBHOOK_URL: `${urls.api}/api/v1/webhooks/payments`,
+      FAKE_WEBHOOK_URL: `${urls.api}/api/v1/webhooks/stripe`,
       FAKE_WEBHOOK_SECRET: secrets.stripeWebhookSecret,
     }),
     one('quotes', ports.quotes, { FAKE_API_KEY: secrets.quotesApiKey }),

@@ -2,9 +2,9 @@ import type { Metal } from '#shared/metals.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { AuditEntry } from '#server/models/audit-entry.ts';
-import { DayRate } from '#server/models/day-rate.ts';
 import { Quote } from '#server/models/quote.ts';
 import { QuoteCandidate } from '#server/models/quote-candidate.ts';
+import { acceptQuote } from './accept-quote.ts';
 import { judgeQuote, type Candidate, type Verdict } from './judge-quote.ts';
 
 export type QuoteReading = { metal: Metal; mid: string; bid: string | null; ask: string | null; at: Date };
@@ -47,17 +47,6 @@ async function keepCandidate(
   }
 }
 
-/** The day's first accepted quote of a metal ranks the register until tomorrow; the UNIQUE key keeps it the first. */
-async function keepDayRate(quote: Quote, unit: Unit): Promise<void> {
-  const day = quote.acceptedAt.toISOString().slice(0, 10);
-  const known = await DayRate.count({ where: { metal: quote.metal, day }, transaction: unit.tx });
-  if (known > 0) return;
-  await DayRate.create(
-    { id: newId(), metal: quote.metal, day, quoteId: quote.id, usdPerTroyOunce: quote.usdPerTroyOunce },
-    { transaction: unit.tx },
-  );
-}
-
 /**
  * Judges one reading against the last accepted value and stores what follows: the quote, or the candidate that waits.
  * Storing the same reading twice has no second effect.
@@ -82,20 +71,7 @@ export async function storeReading(
     await keepCandidate(candidate, reading.metal, verdict.candidate, verdict.mustTellAdmin, unit);
   }
   if (verdict.kind === 'accept') {
-    const quote = await Quote.create(
-      {
-        id: newId(),
-        metal: reading.metal,
-        usdPerTroyOunce: reading.mid,
-        bid: reading.bid,
-        ask: reading.ask,
-        source,
-        quotedAt: reading.at,
-        acceptedAt: unit.now,
-      },
-      { transaction: unit.tx },
-    );
-    await keepDayRate(quote, unit);
+    await acceptQuote({ ...reading, source, acceptedAt: unit.now }, unit);
     await candidate?.destroy({ transaction: unit.tx });
   }
   return verdict;

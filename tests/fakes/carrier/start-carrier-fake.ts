@@ -26,7 +26,7 @@ export type CarrierFakeOptions = {
 
 const word = z.string().trim().min(1).max(60);
 const registerSchema = z.object({ carrier: word, trackingNumber: word, reference: word });
-const clockSchema = z.object({ advanceSeconds: z.coerce.number().int().min(0).max(31_536_000) });
+const clockSchema = z.object({ advanceSeconds: z.coerce.number().int().min(-31_536_000).max(31_536_000) });
 const faultSchema = z.object({ kind: z.enum(['none', 'down', 'slow', 'garbage']) });
 
 function mountService(app: Express, trackers: Trackers, apiKey: string | undefined, slowMs: number) {

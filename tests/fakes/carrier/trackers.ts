@@ -44,7 +44,7 @@ const happenings = {
   returned: { code: 'returned', description: 'Brought back to the sender', place: 'Marrowgate' },
 } satisfies Record<string, Omit<TrackerEvent, 'at'>>;
 
-export const orders = ['deliver', 'deliver-unsigned', 'lose', 'return'] as const;
+export const orders = ['deliver', 'deliver-unsigned', 'lose', 'return', 'hold'] as const;
 export type Order = (typeof orders)[number];
 const orderHappening = {
   deliver: happenings.signed,
@@ -135,13 +135,19 @@ export class Trackers {
     return this.state.trackers.map(shown).reverse();
   }
 
-  /** Ends the journey of the newest parcel with this number. */
+  /** Ends the journey of the newest parcel with this number, or holds it on the road until another button. */
   order(trackingNumber: string, order: Order): Tracker {
     this.#catchUp();
     const tracker = this.state.trackers.findLast((each) => same(each.trackingNumber, trackingNumber));
     if (!tracker) throw new BadRequest('no such tracking number', 404);
     if (isEnded(tracker)) throw new BadRequest(`the parcel is already ${tracker.status}`, 409);
     tracker.planned = [];
+    if (order === 'hold') {
+      if (tracker.status === 'registered') happen(tracker, happenings.accepted, this.nowMs());
+      if (tracker.status === 'accepted') happen(tracker, happenings.in_transit, this.nowMs());
+      this.#save();
+      return shown(tracker);
+    }
     const isDelivery = order === 'deliver' || order === 'deliver-unsigned';
     if (isDelivery && tracker.status === 'registered') happen(tracker, happenings.accepted, this.nowMs());
     if (isDelivery && tracker.status === 'accepted') happen(tracker, happenings.in_transit, this.nowMs());

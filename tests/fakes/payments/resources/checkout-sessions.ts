@@ -18,21 +18,25 @@ const day = 24 * 60 * 60;
 /** A request may be a little slow on its way without breaking a bound. */
 const grace = 60;
 
+function isWithinBounds(seconds: number): boolean {
+  return seconds >= halfHour - grace && seconds <= day + grace;
+}
+
 /**
- * Callers reckon `expires_at` by their own clock, which does not move with ours. So the bounds are held against real
- * time, and the session then lives that long on the fake's clock.
+ * Callers reckon `expires_at` by their own clock: real time, which does not move with ours, or the past in which a demo is
+ * being told. So the bounds hold against either, and the session then lives that long on the fake's clock.
  */
-function lifetime(expiresAt: number | undefined): number {
+function lifetime(fake: Fake, expiresAt: number | undefined): number {
   if (expiresAt === undefined) return day;
-  const seconds = expiresAt - wallNow();
-  if (seconds < halfHour - grace || seconds > day + grace) {
+  const found = [expiresAt - wallNow(), expiresAt - now(fake)].find(isWithinBounds);
+  if (found === undefined) {
     throw invalidRequest(
       'The `expires_at` timestamp must be between 30 minutes and 24 hours from Checkout Session creation.',
       undefined,
       'expires_at',
     );
   }
-  return seconds;
+  return found;
 }
 
 function createSession(call: Call<CreateSession>): Stripe.Checkout.Session {
@@ -43,7 +47,7 @@ function createSession(call: Call<CreateSession>): Stripe.Checkout.Session {
       throw invalidRequest('Not a valid URL', 'url_invalid', param);
     }
   }
-  const seconds = lifetime(input.expires_at);
+  const seconds = lifetime(fake, input.expires_at);
   const items = input.line_items.map((item) => buildItem(fake, item));
   const total = items.reduce((sum, item) => sum + item.amount_total, 0);
   if (total < 50) {
