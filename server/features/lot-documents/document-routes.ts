@@ -3,35 +3,14 @@ import type { Response } from 'express';
 import { DOCUMENT_BYTES_MAX } from '#shared/limits.ts';
 import { idParam } from '#shared/schemas/common.ts';
 import { certificateFileAnswer, lotParams } from '#shared/schemas/lots.ts';
-import { ForbiddenError, invariant, NotFoundError } from '#server/app-error.ts';
-import { canReadDocument } from '#server/features/lots/certificate-presenter.ts';
-import { canSeeLot } from '#server/features/lots/lot-policy.ts';
-import { findOwnDeal } from '#server/features/lots/lot-queries.ts';
+import { NotFoundError } from '#server/app-error.ts';
+import { findReadableDocument } from '#server/features/lots/document-queries.ts';
 import { lotIdOf } from '#server/features/lots/own-lot.ts';
 import { storage } from '#server/integrations/storage.ts';
 import { receivedFile, receiveFile } from '#server/middleware/receive-file.ts';
-import { Certificate } from '#server/models/certificate.ts';
-import { Lot } from '#server/models/lot.ts';
-import { StoredFile } from '#server/models/stored-file.ts';
-import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
+import type { StoredFile } from '#server/models/stored-file.ts';
+import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
 import { uploadCertificate } from './upload-certificate.ts';
-
-/** The bytes of a certificate that the viewer may read. Throws `not-found`, `forbidden`. */
-async function findDocument(id: string, viewer: Actor): Promise<StoredFile> {
-  const certificate = await Certificate.findByPk(id, {
-    include: [
-      { model: Lot, as: 'lot' },
-      { model: StoredFile, as: 'file' },
-    ],
-  });
-  if (certificate === null) throw new NotFoundError();
-  const { lot, file } = certificate;
-  invariant(lot !== undefined && file !== undefined, 'a certificate has its lot and its document');
-  const deal = await findOwnDeal(lot.id, viewer);
-  if (canReadDocument(viewer, lot, deal)) return file;
-  const isBuyer = deal !== null && deal.buyerId === viewer.id;
-  throw canSeeLot(viewer, lot, isBuyer) ? new ForbiddenError() : new NotFoundError();
-}
 
 /** Viewers of PDF that browsers bring do not start in a sandbox; a PDF cannot run script of ours anyway. */
 function contentPolicyOf(mediaType: string): string {
@@ -87,6 +66,6 @@ export const documentRoutes: RouteDefinition[] = [
     access: 'member',
     limit: 'read',
     params: idParam,
-    handle: async ({ params, res, actor }) => sendDocument(await findDocument(params.id, actor), res),
+    handle: async ({ params, res, actor }) => sendDocument(await findReadableDocument(params.id, actor), res),
   }),
 ];

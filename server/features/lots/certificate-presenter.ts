@@ -1,25 +1,10 @@
 import { dec, plain } from '#shared/decimal.ts';
-import { isDeskStaff } from '#shared/roles.ts';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import type { Certificate } from '#server/models/certificate.ts';
 import type { Deal } from '#server/models/deal.ts';
 import type { Lot } from '#server/models/lot.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { isSeller } from './lot-policy.ts';
-
-/**
- * A report carries its customer's name and address, so the document is for the seller, the desk, and the buyer from
- * funding on.
- */
-export function canReadDocument(
-  viewer: Actor | null,
-  lot: Pick<Lot, 'sellerId'>,
-  deal: Pick<Deal, 'buyerId' | 'fundedAt'> | null,
-): boolean {
-  if (viewer === null) return false;
-  if (isSeller(viewer, lot) || isDeskStaff(viewer.role)) return true;
-  return deal !== null && deal.buyerId === viewer.id && deal.fundedAt !== null;
-}
+import { canReadDocument } from './lot-policy.ts';
 
 export function documentUrl(certificateId: string): string {
   return `/api/v1/certificates/${certificateId}/document`;

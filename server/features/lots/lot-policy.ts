@@ -1,6 +1,7 @@
 import { canLotBecome, PUBLIC_LOT_STATES, type LotState } from '#shared/lot-states.ts';
 import { isDeskStaff } from '#shared/roles.ts';
 import type { Actor } from '#server/routing/define-route.ts';
+import type { Deal } from '#server/models/deal.ts';
 import type { Lot } from '#server/models/lot.ts';
 
 type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'>;
@@ -50,4 +51,18 @@ export function lotRights(viewer: Viewer, lot: LotRow): LotRights {
 /** A draft that the desk has never seen leaves nothing behind; what it has seen keeps its history. */
 export function canDeleteDraft(viewer: Viewer, lot: LotRow): boolean {
   return isSeller(viewer, lot) && lot.state === 'draft' && lot.assayVersion === 0;
+}
+
+/**
+ * A report carries its customer's name and address, so the document is for the seller, the desk, and the buyer from
+ * funding on.
+ */
+export function canReadDocument(
+  viewer: Viewer,
+  lot: Pick<Lot, 'sellerId'>,
+  deal: Pick<Deal, 'buyerId' | 'fundedAt'> | null,
+): boolean {
+  if (viewer === null) return false;
+  if (isSeller(viewer, lot) || isDeskStaff(viewer.role)) return true;
+  return deal !== null && deal.buyerId === viewer.id && deal.fundedAt !== null;
 }

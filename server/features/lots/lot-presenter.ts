@@ -3,14 +3,14 @@ import { MeasureError } from '#shared/domain-error.ts';
 import { draftSheetInput } from '#shared/lot-submission.ts';
 import { minorToAmount } from '#shared/money.ts';
 import { isDeskStaff } from '#shared/roles.ts';
-import { lotDraft, type ContentAnswer, type LotAnswer, type PhotoAnswer } from '#shared/schemas/lots.ts';
-import type { MoneyAnswer } from '#shared/schemas/common.ts';
+import { lotDraft, type ContentAnswer, type LotAnswer } from '#shared/schemas/lots.ts';
 import { explainCommission } from '#shared/settlement/commission.ts';
 import { refinedSheet } from '#shared/settlement/refined-sheet.ts';
 import type { CommissionTerms, RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
+import { photoAnswerOf } from '#server/features/photos/photo-answer.ts';
 import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
+import { moneyAnswer } from '#server/money-answer.ts';
 import type { LotAssay } from '#server/models/lot-assay.ts';
-import type { LotPhoto } from '#server/models/lot-photo.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { presentCertificate } from './certificate-presenter.ts';
 import type { CurrentFee } from './fee-queries.ts';
@@ -21,27 +21,6 @@ import type { LotDetail } from './lot-queries.ts';
 
 /** The payment method that a seller's sheet is shown for; the others stand beside it as nets. */
 const SHOWN_METHOD: CurrentFee['method'] = 'card';
-
-export function moneyAnswer(minor: bigint): MoneyAnswer {
-  return { currency: 'USD', amount: minorToAmount(minor) };
-}
-
-export function photoUrl(photoId: string, size: 240 | 960 | 2000): string {
-  return `/api/v1/photos/${photoId}/${size}`;
-}
-
-export function presentPhoto(photo: LotPhoto): PhotoAnswer {
-  return {
-    id: photo.id,
-    caption: photo.caption,
-    isDrawing: photo.isDrawing,
-    thumb: photoUrl(photo.id, 240),
-    medium: photoUrl(photo.id, 960),
-    large: photoUrl(photo.id, 2000),
-    width: photo.file?.width ?? 0,
-    height: photo.file?.height ?? 0,
-  };
-}
 
 export function presentContent(assay: LotAssay): ContentAnswer {
   return {
@@ -187,7 +166,7 @@ export function presentLot(
         : presentCertificate(detail.certificate, lot, deal, viewer),
     closesAt: lot.closesAt?.toISOString() ?? null,
     openedAt: lot.openedAt?.toISOString() ?? null,
-    photos: detail.photos.map(presentPhoto),
+    photos: detail.photos.map(photoAnswerOf),
     ...sheetsOf(detail, board, fees, isOwn),
     nets: isOwn && !isDraft ? netsOf(lot.priceMinor, lot.shippingMinor ?? 0n, fees) : [],
     quoteState: board.state,

@@ -1,8 +1,9 @@
 import { lotDraft, type MyLotsAnswer } from '#shared/schemas/lots.ts';
+import { photoUrl } from '#server/features/photos/photo-answer.ts';
+import { moneyAnswer } from '#server/money-answer.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { moneyAnswer, photoUrl } from './lot-presenter.ts';
 import { firstPhotos } from './lot-queries.ts';
 
 const SHOWN_MAX = 200;

@@ -12,7 +12,6 @@ import {
 } from '#shared/schemas/lots.ts';
 import { NotFoundError } from '#server/app-error.ts';
 import { withTransaction } from '#server/database/transaction.ts';
-import { presentPhoto } from '#server/features/lots/lot-presenter.ts';
 import { findLotPhotos, findVisibleLot } from '#server/features/lots/lot-queries.ts';
 import { lotIdOf } from '#server/features/lots/own-lot.ts';
 import { storage } from '#server/integrations/storage.ts';
@@ -21,6 +20,7 @@ import { LotPhoto } from '#server/models/lot-photo.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
 import { captionPhoto, orderPhotos, removePhoto } from './change-photos.ts';
+import { photoAnswerOf } from './photo-answer.ts';
 import { photoSizeKey } from './photo-files.ts';
 import { PHOTO_MEDIA_TYPE, PHOTO_SIZES, type PhotoSize } from './process-photo.ts';
 import { removeFiles } from './remove-files.ts';
@@ -34,7 +34,7 @@ const sizeParams = z.object({
 });
 
 async function answerPhotos(lotId: string, res: Response): Promise<void> {
-  res.json({ photos: (await findLotPhotos(lotId)).map(presentPhoto) });
+  res.json({ photos: (await findLotPhotos(lotId)).map(photoAnswerOf) });
 }
 
 async function sendPhoto(id: string, size: PhotoSize, viewer: Actor | null, res: Response): Promise<void> {
@@ -66,7 +66,7 @@ const writeRoutes: RouteDefinition[] = [
     handle: async ({ params, req, res, actor }) => {
       const lotId = await lotIdOf(params.code);
       const photo = await uploadPhoto(lotId, receivedFile(req), actor);
-      res.status(201).json(presentPhoto(photo));
+      res.status(201).json(photoAnswerOf(photo));
     },
   }),
   // Before the routes with an id in the same place.

@@ -6,14 +6,15 @@ import type { Metal } from '#shared/metals.ts';
 import type { RegisterQuery } from '#shared/schemas/lots.ts';
 import { sequelize } from '#server/database/connection.ts';
 import type { Position, RankQuotes } from './register-cursor.ts';
-import { allOf, filtersOf, metalsOf, RANK_DECIMALS, type Clause } from './register-filters.ts';
+import { allOf, filtersOf, metalsOf, only, RANK_DECIMALS, type Clause } from './register-filters.ts';
 
 /** A row of the listing before its lot is read: what it is ordered by. */
 export type Ranked = { id: string; metal: Metal; value: string | null };
 
 type Listing = { query: RegisterQuery; quotes: RankQuotes; after: Position | null };
 
-const OPEN: Clause = { sql: "lots.state = 'open'", values: [] };
+const OPEN = only('lots.state', 'open');
+const ofMetal = (metal: Metal) => only('lots.main_metal', metal);
 
 async function select(where: Clause, { value, order }: { value: string; order: string }, limit: number) {
   return sequelize.query<Ranked>(
@@ -34,7 +35,7 @@ async function newest({ query, quotes, after }: Listing, limit: number): Promise
   }
   const rows = await select(
     allOf(clauses),
-    { value: 'lots.opened_at', order: 'lots.opened_at DESC, lots.id DESC' },
+    { value: 'lots.opened_at', order: 'lots.state DESC, lots.opened_at DESC, lots.id DESC' },
     limit,
   );
   return rows.map((row) => ({ ...row, value: new Date(row.value ?? 0).toISOString() }));
@@ -45,7 +46,7 @@ async function byFineContent({ query, quotes, after }: Listing, limit: number): 
   const filters = filtersOf(query, quotes);
   const streams = await Promise.all(
     metalsOf(query).map((metal) => {
-      const clauses = [OPEN, { sql: 'lots.main_metal = ?', values: [metal] }, ...filters];
+      const clauses = [OPEN, ofMetal(metal), ...filters];
       if (after?.value) {
         const grams = after.value;
         clauses.push({ sql: 'lots.main_fine_grams <= CAST(? AS DECIMAL(30,15))', values: [grams] });
@@ -56,7 +57,10 @@ async function byFineContent({ query, quotes, after }: Listing, limit: number): 
       }
       return select(
         allOf(clauses),
-        { value: 'lots.main_fine_grams', order: 'lots.main_fine_grams DESC, lots.id DESC' },
+        {
+          value: 'lots.main_fine_grams',
+          order: 'lots.state DESC, lots.main_metal DESC, lots.main_fine_grams DESC, lots.id DESC',
+        },
         limit,
       );
     }),
@@ -109,12 +113,12 @@ async function byPercent(listing: Listing, limit: number): Promise<Ranked[]> {
     ? []
     : await Promise.all(
         quoted.map((metal) => {
-          const clauses = [OPEN, { sql: 'lots.main_metal = ?', values: [metal] }, ...filters];
+          const clauses = [OPEN, ofMetal(metal), ...filters];
           clauses.push({ sql: 'lots.rank_price IS NOT NULL', values: [] });
           if (after !== null) clauses.push(afterPosition(after, quotes[metal] ?? '', quotes));
           return select(
             allOf(clauses),
-            { value: 'lots.rank_price', order: 'lots.rank_price, lots.id' },
+            { value: 'lots.rank_price', order: 'lots.state, lots.main_metal, lots.rank_price, lots.id' },
             limit,
           );
         }),
@@ -134,7 +138,7 @@ async function unranked(
   const afterId = after !== null && after.value === null ? after.id : null;
   const streams = await Promise.all(
     metalsOf(query).map((metal) => {
-      const clauses = [OPEN, { sql: 'lots.main_metal = ?', values: [metal] }, ...filters];
+      const clauses = [OPEN, ofMetal(metal), ...filters];
       if (quoted.includes(metal)) clauses.push({ sql: 'lots.rank_price IS NULL', values: [] });
       if (afterId !== null) clauses.push({ sql: 'lots.id > ?', values: [afterId] });
       return select(allOf(clauses), { value: 'NULL', order: 'lots.id' }, limit);
