@@ -19,6 +19,8 @@ import type { ProviderTask } from '#server/models/provider-task.ts';
 /** `lost`: another runner took over meanwhile and books the effect. */
 export type TaskOutcome = 'done' | 'due' | 'given_up' | 'lost';
 
+/** After so many tasks in a row without an answer a run ends: the service is down, and the next run asks again. */
+const UNANSWERED_MAX = 3;
 /** One run ends after so many tasks; what is left stays due. */
 const TASKS_MAX = 500;
 const BATCH = 50;
@@ -80,14 +82,19 @@ export async function runProviderTasks(
   const owner = `${os.hostname()}-${process.pid}-${randomUUID().slice(0, 8)}`;
   const kinds = Object.keys(handlers) as ProviderTask['kind'][];
   const counts: Record<TaskOutcome, number> = { done: 0, due: 0, given_up: 0, lost: 0 };
-  for (let seen = 0; seen < TASKS_MAX;) {
+  let unanswered = 0;
+  for (let seen = 0; seen < TASKS_MAX && unanswered < UNANSWERED_MAX;) {
     const ids = await claimableTaskIds({ kinds, limit: BATCH, ...filter }, await databaseNow());
     if (ids.length === 0) break;
     seen += ids.length;
     for (const taskId of ids) {
       const task = await withTransaction({}, (unit) => claimProviderTask({ taskId, owner }, unit));
       const handler = task === null ? undefined : handlers[task.kind];
-      if (task !== null && handler !== undefined) counts[await perform(task, handler)] += 1;
+      if (task === null || handler === undefined) continue;
+      const outcome = await perform(task, handler);
+      counts[outcome] += 1;
+      unanswered = outcome === 'due' || outcome === 'given_up' ? unanswered + 1 : 0;
+      if (unanswered >= UNANSWERED_MAX) break;
     }
   }
   return counts;

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import mariadb from 'mariadb';
+import mariadb, { type Connection } from 'mariadb';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import '#server/models/index.ts';
 import { ledgerBalancesCheck } from '#jobs/checks/ledger-balances.ts';
@@ -223,8 +223,36 @@ describe('any sequence of journals', () => {
   });
 });
 
+describe('a reader beside many writers', () => {
+  it('sees the whole ledger at zero in every snapshot, and no escrow overdrawn', async () => {
+    const books = await Promise.all(Array.from({ length: 6 }, openBooks));
+    let isWriting = true;
+    const write = async (own: Books) => {
+      for (let turn = 0; turn < 8; turn += 1) {
+        const other = books[(books.indexOf(own) + turn) % books.length]!;
+        await post(own.dealId, 'funding', funding(own, 1_000n));
+        const entries = settlement({ dealId: own.dealId, memberId: other.memberId }, 1_000n, 40n);
+        await post(own.dealId, 'settlement', entries);
+      }
+    };
+    const writers = Promise.all(books.map(write)).finally(() => {
+      isWriting = false;
+    });
+    let reads = 0;
+    while (isWriting) {
+      const total = (await trialBalance()).reduce((sum, row) => sum + row.amountMinor, 0n);
+      expect(total).toBe(0n);
+      reads += 1;
+    }
+    await writers;
+    expect(reads).toBeGreaterThan(5);
+    expect(await ledgerBalancesCheck.find()).toEqual([]);
+    for (const { dealId } of books) expect(await heldMinor(dealId)).toBe(0n);
+  });
+});
+
 describe('what is written once', () => {
-  let app: mariadb.Connection;
+  let app: Connection;
   beforeAll(async () => {
     const url = new URL(process.env.DATABASE_URL ?? '');
     app = await mariadb.createConnection({

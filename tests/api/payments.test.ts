@@ -84,13 +84,11 @@ describe('starting a payment', () => {
   it('opens one session for twenty clicks at once', async () => {
     const { deal, buyer } = await dealWithBuyer();
     const answers = await Promise.all(Array.from({ length: 20 }, () => start(buyer, deal)));
-    const opened = answers.filter(({ status }) => status === 200);
-    for (const answer of answers) expect([200, 503]).toContain(answer.status);
-    expect(opened.length).toBeGreaterThan(0);
-    expect(new Set(opened.map(({ body }) => body.url)).size).toBe(1);
+    expect(answers.map(({ status }) => status)).toEqual(Array.from({ length: 20 }, () => 200));
+    expect(new Set(answers.map(({ body }) => body.url)).size).toBe(1);
     expect(await sessionsAtProvider(deal)).toHaveLength(1);
     const after = await start(buyer, deal).expect(200);
-    expect(after.body.url).toBe(opened[0]!.body.url);
+    expect(after.body.url).toBe(answers[0]!.body.url);
   });
 
   it('needs a key, and refuses one that was used for another deal', async () => {

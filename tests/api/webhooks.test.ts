@@ -13,6 +13,7 @@ import { logger } from '#server/logger.ts';
 import { AuditEntry } from '#server/models/audit-entry.ts';
 import { Deal } from '#server/models/deal.ts';
 import { DealEvent } from '#server/models/deal-event.ts';
+import { LedgerJournal } from '#server/models/ledger-journal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { OutboxMail } from '#server/models/outbox-mail.ts';
 import { Payment } from '#server/models/payment.ts';
@@ -332,5 +333,28 @@ describe('the books at the end', () => {
       expect(Object.keys(breaches as object)).toEqual([]);
     });
     expect(await accountSumMinor({ kind: 'provider' })).toBe(await payments.balance('platform'));
+  });
+
+  it('name each charge, refund, transfer and payout of the provider once, and nothing else', async () => {
+    const moved = await Promise.all(
+      (['charge', 'refund', 'transfer', 'payout'] as const).map((kind) => payments.objects(kind)),
+    );
+    const [charges, refunds, transfers, payouts] = moved;
+    const atProvider = [
+      ...charges!.filter(({ owner, value }) => owner === 'platform' && value['status'] === 'succeeded'),
+      ...refunds!,
+      ...transfers!,
+      ...payouts!.filter(({ value }) => value['status'] === 'paid'),
+    ].map(({ id }) => id);
+    const journals = await LedgerJournal.findAll({
+      where: { kind: ['funding', 'refund', 'transfer', 'payout'] },
+    });
+    const returned = await LedgerJournal.findAll({ where: { kind: 'payout_returned' } });
+    const takenBack = new Set(returned.map(({ reversesJournalId }) => reversesJournalId));
+    const booked = journals
+      .filter(({ id }) => !takenBack.has(id))
+      .map(({ providerObjectId }) => providerObjectId);
+    expect(atProvider.length).toBeGreaterThan(8);
+    expect(booked.sort()).toEqual(atProvider.sort());
   });
 });

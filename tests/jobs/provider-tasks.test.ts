@@ -212,6 +212,14 @@ describe('a claim', () => {
     expect(told.detail).toMatchObject({ kind: 'transfer', tries: TASK_TRIES_MAX });
   });
 
+  it('is not even tried for the rest while the service is down', async () => {
+    const deals = [];
+    for (let index = 0; index < 5; index += 1) deals.push(await settledDeal());
+    await payments.fault({ kind: '429', path: '/v1/transfers', method: 'POST', count: 100 });
+    const counts = await runProviderTasks(PAYMENT_TASK_HANDLERS, { dealIds: deals.map(({ id }) => id) });
+    expect(counts).toMatchObject({ due: 3, done: 0 });
+  });
+
   it('comes back ever later, up to six hours and a little', () => {
     const pauses = Array.from({ length: TASK_TRIES_MAX }, (_, index) => backoffSeconds(index + 1, 0.5));
     expect(pauses.slice(0, 4)).toEqual([5, 10, 20, 40]);

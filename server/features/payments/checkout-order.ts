@@ -2,7 +2,7 @@ import { env } from '#server/env.ts';
 import type { CheckoutOrder } from '#server/integrations/payments.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
-import { Payment } from '#server/models/payment.ts';
+import type { Payment } from '#server/models/payment.ts';
 import { invariant } from '#server/app-error.ts';
 
 /**

@@ -60,21 +60,25 @@ async function start(deal: Deal, prepared: Payment): Promise<Started> {
   }
 }
 
-async function openedBy(deal: Deal, prepared: Payment) {
-  if (prepared.state === 'open') {
-    invariant(
-      prepared.providerSessionId !== null && prepared.sessionUrl !== null,
-      'an open payment has its page',
-    );
-    return { attempt: prepared.attempt, sessionId: prepared.providerSessionId, url: prepared.sessionUrl };
+type Opened = { attempt: number; sessionId: string; url: string };
+
+function pageOf({ attempt, providerSessionId, sessionUrl }: Payment): Opened {
+  invariant(providerSessionId !== null && sessionUrl !== null, 'an open payment has its page');
+  return { attempt, sessionId: providerSessionId, url: sessionUrl };
+}
+
+/** The page of the one session; a request that the provider sent away may find that its twin was let in. */
+async function openedBy(deal: Deal, prepared: Payment): Promise<Opened> {
+  if (prepared.state === 'open') return pageOf(prepared);
+  try {
+    const { payment, reading } = await asRefusal(() => start(deal, prepared));
+    if (reading.url === null) throw new AppError('payment-provider-unavailable');
+    return { attempt: payment.attempt, sessionId: reading.sessionId, url: reading.url };
+  } catch (error) {
+    const payment = await prepared.reload();
+    if (payment.state === 'open') return pageOf(payment);
+    throw error;
   }
-  const { payment, reading } = await asRefusal(() => start(deal, prepared));
-  // A session that was paid or expired while we asked has no page any more.
-  return {
-    attempt: payment.attempt,
-    sessionId: reading.sessionId,
-    url: reading.url ?? payment.sessionUrl ?? '',
-  };
 }
 
 const startPaymentRoute = defineRoute<Params>({
