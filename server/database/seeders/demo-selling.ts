@@ -9,7 +9,7 @@ import { Laboratory } from '#server/models/laboratory.ts';
 import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
 import { DEMO_LABORATORIES } from './demo-people.ts';
-import type { DemoLot } from './demo-lots.ts';
+import type { DemoLot } from './demo-lot.ts';
 import type { DemoPerson } from './demo-stage.ts';
 import { drawReport } from './draw-report.ts';
 import { drawSpecimen } from './draw-specimen.ts';

@@ -1,5 +1,6 @@
 import type { DemoClock } from './demo-clock.ts';
-import { DEMO_LOTS, type DemoLot } from './demo-lots.ts';
+import type { DemoLot } from './demo-lot.ts';
+import { DEMO_LOTS } from './demo-lots.ts';
 import type { PersonKey, StaffKey } from './demo-people.ts';
 import { decideAtDesk, writeLot } from './demo-selling.ts';
 import { press } from './demo-services.ts';
