@@ -43,7 +43,7 @@ export async function castOf(
     ...Object.entries(DEMO_STAFF).map(([key, person]) => ({
       key,
       timeZone: 'UTC',
-      weightUnit: 'g',
+      weightUnit: 'g' as const,
       ...person,
     })),
   ];
