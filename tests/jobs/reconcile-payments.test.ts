@@ -89,9 +89,18 @@ describe('reconciliation, when no message ever comes', () => {
 
 describe('the checks', () => {
   it('find nothing where the books agree, and the job keeps what it found', async () => {
-    expect(await runJob(runChecksJob)).toMatchObject({ checks: 5, breaches: {} });
+    expect(await runJob(runChecksJob)).toEqual({ checks: 5, breaches: {}, unanswered: [] });
     const lease = await JobLease.findByPk('run-checks', { rejectOnEmpty: true });
     expect(lease).toMatchObject({ lastOutcome: 'done', lastDetail: { checks: 5, breaches: {} } });
+  });
+
+  it('go on without the provider while it does not answer', async () => {
+    await payments.fault({ kind: '429', path: '/v1/balance', count: 1 });
+    expect(await runChecksJob.run({ now: new Date(), log: logger })).toEqual({
+      checks: 5,
+      breaches: {},
+      unanswered: ['provider-balance'],
+    });
   });
 
   it('find money that the provider does not know of', async () => {
