@@ -59,6 +59,8 @@ export const comparisonRow = z.object({
   onReport: z.string(),
   onLot: z.string(),
   differs: z.boolean(),
+  /** The machine cannot compare this line: a person must look. */
+  isByEye: z.boolean(),
   note: z.string().nullable(),
 });
 

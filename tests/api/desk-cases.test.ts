@@ -192,7 +192,7 @@ describe('the case', () => {
     const { body } = await desk.get(`${BASE}/${made.id}`).expect(200);
     const marked = (body as CaseAnswer).comparison.filter((row) => row.differs);
     expect(marked.map((row) => row.label)).toEqual(['Mass', 'Form', 'Gold: fineness']);
-    expect(marked[0]!.note).toContain('0.320000 g');
+    expect(marked[0]!.note).toContain('0.32 g');
     expect(marked[2]!.note).toBe('The lot states 5.2 ‰ less than the report.');
     expect(body.proposedGrade).toBe('examined');
     expect(body.gaps).toEqual(['Neither the mass nor the mark on the report is the lot’s.']);
@@ -317,6 +317,10 @@ describe('verifying', () => {
 
   it('refuses a lot that claims more than its report gives', async () => {
     const made = await claimed({ stated: '996', reported: '995.2' });
+    expect(made.view.proposedGrade).toBe('examined');
+    expect(made.view.gaps).toEqual([
+      'The lot claims more than the report gives (Gold): verification is refused.',
+    ]);
     const answer = await desk.post(`${BASE}/${made.id}/verify`, confirmation(made)).expect(422);
     expect(answer.body.errors[0]).toMatchObject({ code: 'claims-beyond-report' });
     expect((await Lot.findByPk(made.lotId))!.state).toBe('submitted');

@@ -1,9 +1,15 @@
 import type { AuditAnswer } from '#shared/schemas/desk.ts';
+import type { AuditEntry } from '#server/models/audit-entry.ts';
 import type { AuditPage } from './audit-queries.ts';
 
-function subjectText(kind: string, id: string, names: ReadonlyMap<string, string>): string {
-  const name = kind === 'member' ? names.get(id) : undefined;
-  return `${kind.replaceAll('_', ' ')} ${name ?? id}`;
+/** The words by which a person knows the subject; its id where there are none. */
+function subjectText(entry: AuditEntry, names: ReadonlyMap<string, string>): string {
+  const { subjectKind, subjectId, detail } = entry;
+  const said = detail as { lot?: unknown; name?: unknown };
+  if (subjectKind === 'certificate' && typeof said.lot === 'string') return `certificate of lot ${said.lot}`;
+  if (subjectKind === 'laboratory' && typeof said.name === 'string') return `laboratory ${said.name}`;
+  const name = subjectKind === 'member' ? names.get(subjectId) : undefined;
+  return `${subjectKind.replaceAll('_', ' ')} ${name ?? subjectId}`;
 }
 
 export function presentAudit({ entries, names, nextBefore }: AuditPage): AuditAnswer {
@@ -13,7 +19,7 @@ export function presentAudit({ entries, names, nextBefore }: AuditPage): AuditAn
       who: entry.actorId === null ? 'the house' : (names.get(entry.actorId) ?? entry.actorId),
       role: entry.actorRole,
       act: entry.act,
-      subject: subjectText(entry.subjectKind, entry.subjectId, names),
+      subject: subjectText(entry, names),
       detail: entry.detail as Record<string, unknown>,
     })),
     nextBefore: nextBefore?.toISOString() ?? null,

@@ -7,12 +7,13 @@ import type { LotEvent } from '#server/models/lot-event.ts';
 import type { LotPhoto } from '#server/models/lot-photo.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { gradeCase, massesOf } from './case-evidence.ts';
-import type { flagCase} from './case-flags.ts';
+import type { flagCase } from './case-flags.ts';
 import { type CaseFlag } from './case-flags.ts';
 import { canOnCase, canPull } from './case-policy.ts';
 import type { LoadedCase } from './case-queries.ts';
-import { compareReport } from './compare-report.ts';
-import { EVIDENCE_GAP_LABELS } from '#shared/assay/evidence.ts';
+import { claimsBeyondReport, compareReport } from './compare-report.ts';
+import { nameOfElement } from './element-words.ts';
+import { EVIDENCE_GAP_LABELS, type EvidenceGrade } from '#shared/assay/evidence.ts';
 import { canSuspend } from './member-policy.ts';
 
 const trimmed = (value: string) => plain(dec(value));
@@ -57,9 +58,9 @@ function presentPhoto(photo: LotPhoto): CaseAnswer['lot']['photos'][number] {
     id: photo.id,
     caption: photo.caption,
     isDrawing: photo.isDrawing,
-    thumb: at('thumb'),
-    medium: at('medium'),
-    large: at('large'),
+    thumb: at('240'),
+    medium: at('960'),
+    large: at('2000'),
     width: photo.file?.width ?? 0,
     height: photo.file?.height ?? 0,
   };
@@ -147,6 +148,19 @@ function presentDecision(
   };
 }
 
+/** What verification would come to, and what stands in its way. */
+function proposalOf({ certificate, lot, laboratory, results, assays }: LoadedCase): {
+  grade: EvidenceGrade;
+  gaps: string[];
+} {
+  const graded = gradeCase({ certificate, lot, laboratory, desk: 'verified', isMarkSeen: false });
+  const gaps = graded.gaps.map((gap) => EVIDENCE_GAP_LABELS[gap]);
+  const claims = claimsBeyondReport({ results, contents: assays }).map(nameOfElement);
+  if (claims.length === 0) return { grade: graded.grade, gaps };
+  gaps.push(`The lot claims more than the report gives (${claims.join(', ')}): verification is refused.`);
+  return { grade: 'examined', gaps };
+}
+
 export type CaseContext = {
   actor: Actor;
   names: ReadonlyMap<string, string>;
@@ -157,12 +171,12 @@ export type CaseContext = {
 
 /** A case as one of the desk sees it: document, report, lot, what differs and what was noticed. */
 export function presentCase(each: LoadedCase, context: CaseContext): CaseAnswer {
-  const { certificate, lot, seller, file, laboratory, assays } = each;
+  const { certificate, lot, seller, file, assays } = each;
   const { actor, names, events, completedDeals, flags } = context;
   const report = presentReport(each);
   const shown = presentLot(each, events);
   const masses = massesOf(certificate, lot);
-  const proposal = gradeCase({ certificate, lot, laboratory, desk: 'verified', isMarkSeen: false });
+  const proposal = proposalOf(each);
   const may = (act: Parameters<typeof canOnCase>[1]) => canOnCase(actor, act, { certificate, lot });
   return {
     id: certificate.id,
@@ -195,7 +209,7 @@ export function presentCase(each: LoadedCase, context: CaseContext): CaseAnswer 
     }),
     flags: [...flags],
     proposedGrade: proposal.grade,
-    gaps: proposal.gaps.map((gap) => EVIDENCE_GAP_LABELS[gap]),
+    gaps: proposal.gaps,
     decision: presentDecision(certificate, names),
     can: {
       claim: may('claim'),

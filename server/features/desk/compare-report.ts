@@ -49,16 +49,16 @@ function massRow({ reportMass, lotMass }: Comparison): ComparisonRow {
   const onLot = massText(lotMass);
   if (reportMass === null) {
     const note = 'The report names no mass; only its mark can tie it to the piece.';
-    return { label: 'Mass', onReport: ABSENT, onLot, differs: true, note };
+    return { label: 'Mass', onReport: ABSENT, onLot, differs: true, isByEye: false, note };
   }
   const onReport = massText(reportMass);
   const gap = toGrams(reportMass).minus(toGrams(lotMass)).abs();
   const differs = !massesAgree(reportMass, lotMass);
-  if (gap.isZero()) return { label: 'Mass', onReport, onLot, differs, note: null };
+  if (gap.isZero()) return { label: 'Mass', onReport, onLot, differs, isByEye: false, note: null };
   const note = differs
-    ? `Apart by ${formatGrams(gap, 6)} g, more than the last digits allow.`
+    ? `Apart by ${formatGrams(gap)} g, more than the last digits allow.`
     : 'Within the last digits of the two balances.';
-  return { label: 'Mass', onReport, onLot, differs, note };
+  return { label: 'Mass', onReport, onLot, differs, isByEye: false, note };
 }
 
 function formRow({ form, itemDescription }: Comparison): ComparisonRow {
@@ -69,6 +69,7 @@ function formRow({ form, itemDescription }: Comparison): ComparisonRow {
     onReport: itemDescription === '' ? ABSENT : itemDescription,
     onLot: form,
     differs,
+    isByEye: !differs,
     note: differs ? 'The report names another form.' : 'Compare with the photos.',
   };
 }
@@ -79,6 +80,7 @@ function markRow({ itemMark }: Comparison): ComparisonRow {
     onReport: itemMark ?? ABSENT,
     onLot: 'see the photos',
     differs: false,
+    isByEye: itemMark !== null,
     note: itemMark === null ? 'The report names no mark.' : 'Look for this mark on the photos.',
   };
 }
@@ -93,6 +95,7 @@ function finenessRow(label: string, result: ReportedResult, content: StatedConte
     onReport: permilleText(result.finenessPermille),
     onLot: permilleText(content.finenessPermille),
     differs: !gap.isZero(),
+    isByEye: false,
     note,
   };
 }
@@ -104,7 +107,14 @@ function uncertaintyRow(label: string, result: ReportedResult, content: StatedCo
     const note = content.isUncertaintyAssumed
       ? 'The report states none; the method’s default is labelled as assumed.'
       : 'The report states none, yet the lot does not say that its own is assumed.';
-    return { label: name, onReport: ABSENT, onLot, differs: !content.isUncertaintyAssumed, note };
+    return {
+      label: name,
+      onReport: ABSENT,
+      onLot,
+      differs: !content.isUncertaintyAssumed,
+      isByEye: false,
+      note,
+    };
   }
   const gap = dec(content.uncertaintyPermille).minus(result.uncertaintyPermille);
   const note = gap.isZero()
@@ -113,7 +123,7 @@ function uncertaintyRow(label: string, result: ReportedResult, content: StatedCo
       ? 'The lot claims to be surer than the report.'
       : 'The lot is less sure than the report.';
   const onReport = `± ${permilleText(result.uncertaintyPermille)}`;
-  return { label: name, onReport, onLot, differs: !gap.isZero(), note };
+  return { label: name, onReport, onLot, differs: !gap.isZero(), isByEye: false, note };
 }
 
 function methodRow(label: string, result: ReportedResult, content: StatedContent): ComparisonRow {
@@ -122,6 +132,7 @@ function methodRow(label: string, result: ReportedResult, content: StatedContent
     onReport: methodName(result.method),
     onLot: methodName(content.method),
     differs: result.method !== content.method,
+    isByEye: false,
     note: null,
   };
 }
@@ -137,6 +148,7 @@ function onlyOnOneSide(
     onReport: result === undefined ? ABSENT : permilleText(result.finenessPermille),
     onLot: content === undefined ? ABSENT : permilleText(content.finenessPermille),
     differs: true,
+    isByEye: false,
     note: result === undefined ? `Not on the report${paid}.` : 'On the report, left out of the lot.',
   };
 }

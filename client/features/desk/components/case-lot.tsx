@@ -44,7 +44,7 @@ export function CaseLot({ view }: { view: CaseAnswer }) {
           {
             term: 'Lot',
             data: (
-              <Link to={paths.lot(lot.code)} className="link fig">
+              <Link to={paths.lot(lot.code)} className="link fig inline-block py-0.5">
                 {lot.code}
               </Link>
             ),

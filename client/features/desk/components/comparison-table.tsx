@@ -3,15 +3,17 @@ import { cx } from '../../../lib/cx.ts';
 
 type Row = CaseAnswer['comparison'][number];
 
+const VERDICTS = {
+  differs: { word: 'differs', sign: 'M1 4.2h10M1 7.8h10M3 11 9 1', look: 'font-semibold text-litharge' },
+  agrees: { word: 'agrees', sign: 'M1 4.2h10M1 7.8h10', look: 'text-ink-2' },
+  look: { word: 'look yourself', sign: 'M1 6q5-6 10 0-5 6-10 0M6 5.9v.2', look: 'font-semibold text-ink' },
+};
+
 /** The sign is drawn and the word is written: neither rests on colour. */
-function Verdict({ differs }: { differs: boolean }) {
+function Verdict({ row }: { row: Row }) {
+  const { word, sign, look } = VERDICTS[row.differs ? 'differs' : row.isByEye ? 'look' : 'agrees'];
   return (
-    <span
-      className={cx(
-        'inline-flex items-center gap-1.5 text-note',
-        differs ? 'font-semibold text-litharge' : 'text-ink-2',
-      )}
-    >
+    <span className={cx('inline-flex items-center gap-1.5 text-note', look)}>
       <svg
         viewBox="0 0 12 12"
         className="size-3"
@@ -20,9 +22,9 @@ function Verdict({ differs }: { differs: boolean }) {
         strokeWidth="1.6"
         aria-hidden="true"
       >
-        <path d={differs ? 'M1 4.2h10M1 7.8h10M3 11 9 1' : 'M1 4.2h10M1 7.8h10'} />
+        <path d={sign} />
       </svg>
-      {differs ? 'differs' : 'agrees'}
+      {word}
     </span>
   );
 }
@@ -40,7 +42,7 @@ function ComparedRow({ row }: { row: Row }) {
       </tr>
       <tr>
         <td colSpan={3} className={cx('pb-2', mark)}>
-          <Verdict differs={row.differs} />
+          <Verdict row={row} />
           {row.note && <span className="text-note text-ink-2">: {row.note}</span>}
         </td>
       </tr>
@@ -51,11 +53,13 @@ function ComparedRow({ row }: { row: Row }) {
 /** The report's figures beside the lot's. */
 export function ComparisonTable({ rows }: { rows: readonly Row[] }) {
   const differing = rows.filter((row) => row.differs).length;
+  const byEye = rows.filter((row) => row.isByEye).length;
   return (
     <section aria-labelledby="comparison-heading">
       <h2 id="comparison-heading">Report and lot compared</h2>
       <p className="mb-3 text-ink-2">
-        {differing === 0 ? 'Nothing differs.' : `${differing} of ${rows.length} lines differ.`}
+        {differing === 0 ? 'No line differs.' : `${differing} of ${rows.length} lines differ.`}
+        {byEye > 0 && ` ${byEye} can only be compared by eye.`}
       </p>
       <table className="w-full table-fixed border-collapse">
         <thead>

@@ -15,7 +15,7 @@ function Row({ deal }: { deal: DeskDealsAnswer['contested'][number] }) {
         {deal.isOwn ? (
           <span className="font-medium">{deal.lotTitle}</span>
         ) : (
-          <Link to={paths.deal(deal.code)} className="link font-medium">
+          <Link to={paths.deal(deal.code)} className="link inline-block py-0.5 font-medium">
             {deal.lotTitle}
           </Link>
         )}

@@ -45,7 +45,7 @@ export function DocumentView({ document }: { document: CaseAnswer['document'] })
     <section aria-labelledby="document-heading">
       <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-4">
         <h2 id="document-heading">Document</h2>
-        <a href={url} target="_blank" rel="noreferrer" className="link text-note">
+        <a href={url} target="_blank" rel="noreferrer" className="link inline-block py-1 text-note">
           Open {name} in a tab of its own
         </a>
       </div>

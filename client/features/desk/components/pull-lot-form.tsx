@@ -12,8 +12,8 @@ export function PullLotForm({ code, sellerName }: PullLotFormProps) {
   return (
     <ReasonForm
       label="Pull the lot"
-      fieldLabel="Reason for the seller"
-      hint="It stands in the lot’s history and in a mail."
+      fieldLabel="Reason for pulling it"
+      hint="The seller reads it in the lot’s history and in a mail."
       schema={reasonRequest}
       send={(input) => sendPullLot(code, input)}
       onDone={() => {

@@ -35,7 +35,7 @@ function Row({ row, isWaiting }: { row: QueueRow; isWaiting: boolean }) {
         {isOwn ? (
           <span className="font-medium">{row.lotTitle}</span>
         ) : (
-          <Link to={paths.deskCase(row.id)} className="link font-medium">
+          <Link to={paths.deskCase(row.id)} className="link inline-block py-0.5 font-medium">
             {row.lotTitle}
           </Link>
         )}
