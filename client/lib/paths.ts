@@ -10,6 +10,7 @@ export const paths = {
   draft: (code: string) => `/sell/${segment(code)}`,
   deals: () => '/deals',
   deal: (code: string) => `/deals/${segment(code)}`,
+  dealPayment: (code: string, said: 'returned' | 'stopped') => `/deals/${segment(code)}/payment?said=${said}`,
   desk: () => '/desk',
   deskCase: (id: string) => `/desk/certificates/${segment(id)}`,
   deskDeals: () => '/desk/deals',
