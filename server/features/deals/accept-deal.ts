@@ -17,7 +17,7 @@ export async function acceptDeal(dealId: string, unit: Unit, actor: Actor): Prom
   const deal = await readDealFor('buyer', dealId, unit, actor);
   assertState(deal, ['delivered'], 'Only what has been delivered can be accepted.');
   assertNotFrozen(deal);
-  if (deal.receipt == null) {
+  if ((deal.receipt ?? null) === null) {
     throw new ConflictError('illegal-transition', 'Weigh it and record the received mass first.');
   }
   const accepted = { act: 'accepted', actorKind: 'buyer', actorId: actor.id } as const;

@@ -14,8 +14,8 @@ export async function confirmDelivery(dealId: string, unit: Unit, actor: Actor):
   const deal = await readDealFor('buyer', dealId, unit, actor);
   assertState(deal, ['shipped']);
   assertNotFrozen(deal);
-  const { parcel } = deal;
-  if (parcel == null || parcel.deliveredAt === null || parcel.isSigned !== false) {
+  const parcel = deal.parcel ?? null;
+  if (parcel === null || parcel.deliveredAt === null || parcel.isSigned !== false) {
     throw new ConflictError(
       'illegal-transition',
       'The carrier has not reported a delivery without signature.',

@@ -1,18 +1,18 @@
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { ruleByFrom } from './deadlines.ts';
-import { isOverdueOrLost } from './deal-policy.ts';
+import { isOverdueOrLost, isUnsignedDelivery } from './deal-policy.ts';
 
 export type Due = NonNullable<DealAnswer['due']>;
 
 function dueWhenShipped(deal: Deal, now: Date): Omit<Due, 'at'> & { at: Date | null } {
-  if (deal.parcel?.deliveredAt != null && deal.parcel.isSigned === false) {
+  if (isUnsignedDelivery(deal)) {
     return {
       who: 'buyer',
       act: 'Confirm the delivery',
       at: deal.arriveBy,
       silence:
-        'It was delivered without a signature. Nothing counts as delivered until you confirm it; from this day on it can be contested.',
+        'It was delivered without a signature. It does not count as delivered until the buyer confirms it; from this day on it can be contested.',
     };
   }
   if (isOverdueOrLost(deal, now)) {
@@ -53,9 +53,9 @@ function dueOfState(deal: Deal, now: Date): (Omit<Due, 'at'> & { at: Date | null
     case 'delivered':
       return {
         who: 'buyer',
-        act: deal.receipt == null ? 'Weigh it and record the mass' : 'Accept or contest',
+        act: (deal.receipt ?? null) === null ? 'Weigh it and record the mass' : 'Accept or contest',
         at: deal.inspectBy,
-        silence: 'Nothing is accepted by silence: the money stays held until you accept or contest.',
+        silence: 'Nothing is accepted by silence: the money stays held until the buyer accepts or contests.',
       };
     case 'contested':
       return {
@@ -77,7 +77,8 @@ function dueOfState(deal: Deal, now: Date): (Omit<Due, 'at'> & { at: Date | null
 }
 
 function dueOfRefund(deal: Deal): (Omit<Due, 'at'> & { at: Date | null }) | null {
-  if (deal.refund == null || deal.refund.state === 'succeeded') return null;
+  const refund = deal.refund ?? null;
+  if (refund === null || refund.state === 'succeeded') return null;
   return {
     who: 'provider',
     act: 'Refund the buyer',

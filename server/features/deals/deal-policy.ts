@@ -31,8 +31,16 @@ export function isOverdueOrLost(deal: JudgedDeal, now: Date): boolean {
   return isPast(deal.arriveBy, now) || ['lost', 'returned'].includes(deal.parcel?.trackerStatus ?? '');
 }
 
-function isUnsignedDelivery(deal: JudgedDeal): boolean {
-  return deal.state === 'shipped' && deal.parcel?.deliveredAt != null && deal.parcel.isSigned === false;
+/** The carrier says delivered, but nobody signed: it waits for the buyer's word. */
+export function isUnsignedDelivery(deal: JudgedDeal): boolean {
+  const parcel = deal.parcel ?? null;
+  return (
+    deal.state === 'shipped' && parcel !== null && parcel.deliveredAt !== null && parcel.isSigned === false
+  );
+}
+
+function hasReceipt(deal: JudgedDeal): boolean {
+  return (deal.receipt ?? null) !== null;
 }
 
 export type DealAction =
@@ -51,8 +59,8 @@ type Rule = (deal: JudgedDeal, now: Date) => boolean;
 const BUYER_RULES: Partial<Record<DealAction, Rule>> = {
   pay: (deal, now) => deal.state === 'agreed' && !isPast(deal.fundBy, now),
   confirmDelivery: (deal) => isUnsignedDelivery(deal) && deal.frozenAt === null,
-  recordReceipt: (deal) => deal.state === 'delivered' && deal.receipt == null,
-  accept: (deal) => deal.state === 'delivered' && deal.receipt != null && deal.frozenAt === null,
+  recordReceipt: (deal) => deal.state === 'delivered' && !hasReceipt(deal),
+  accept: (deal) => deal.state === 'delivered' && hasReceipt(deal) && deal.frozenAt === null,
   contest: (deal, now) =>
     deal.frozenAt === null &&
     (deal.state === 'delivered' || (deal.state === 'shipped' && isOverdueOrLost(deal, now))),

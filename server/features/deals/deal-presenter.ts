@@ -4,16 +4,15 @@ import { minorToAmount } from '#shared/money.ts';
 import type { MoneyAnswer } from '#shared/schemas/common.ts';
 import type { DealAnswer, DealRow, DealsAnswer } from '#shared/schemas/deals.ts';
 import type { DeskDealsAnswer } from '#shared/schemas/desk.ts';
-import type { SettlementSheet } from '#shared/settlement/sheet-types.ts';
 import { NotFoundError } from '#server/app-error.ts';
 import type { Deal } from '#server/models/deal.ts';
-import type { DealSheet } from '#server/models/deal-sheet.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { CONTEST_REASON_LABELS, type ContestReason } from './contest-reasons.ts';
 import { ruleByFrom } from './deadlines.ts';
 import { dueOf } from './deal-due.ts';
 import { eventText } from './deal-event-text.ts';
 import { netMinorOf } from './deal-mails.ts';
+import { sheetFor } from './deal-sheets.ts';
 import { canDo, isOwnCase, sideOf, type DealSide } from './deal-policy.ts';
 import type { DealListEntry, DealView } from './deal-queries.ts';
 import { compareReceivedMass } from './received-mass.ts';
@@ -24,11 +23,6 @@ const usd = (minor: bigint): MoneyAnswer => ({ currency: 'USD', amount: minorToA
 const iso = (moment: Date | null | undefined): string | null => moment?.toISOString() ?? null;
 const thumbUrl = (photoId: string | null): string | null =>
   photoId === null ? null : `/api/v1/photos/${photoId}/240`;
-
-/** The seller's sheet carries the commission, which is not the buyer's business. */
-export function sheetFor(side: DealSide, stored: DealSheet): SettlementSheet {
-  return (side === 'buyer' ? stored.buyerSheet : stored.sellerSheet) as SettlementSheet;
-}
 
 function presentCommission(deal: Deal, side: DealSide): DealAnswer['commission'] {
   if (side === 'buyer') return null;
@@ -56,8 +50,8 @@ function presentDelivery(deal: Deal, side: DealSide): DealAnswer['delivery'] {
 }
 
 function presentParcel(deal: Deal): DealAnswer['parcel'] {
-  const { parcel } = deal;
-  if (parcel == null) return null;
+  const parcel = deal.parcel ?? null;
+  if (parcel === null) return null;
   return {
     carrier: parcel.carrier,
     trackingNumber: parcel.trackingNumber,
@@ -69,17 +63,20 @@ function presentParcel(deal: Deal): DealAnswer['parcel'] {
   };
 }
 
-function presentReceipt({ lot, receipt }: DealView['deal']): DealAnswer['receipt'] {
-  if (receipt == null) return null;
+function presentReceipt(deal: DealView['deal']): DealAnswer['receipt'] {
+  const receipt = deal.receipt ?? null;
+  if (receipt === null) return null;
   const mass = { value: receipt.massValue, unit: receipt.massUnit };
-  return { mass, ...compareReceivedMass(lot, mass), at: receipt.recordedAt.toISOString() };
+  return { mass, ...compareReceivedMass(deal.lot, mass), at: receipt.recordedAt.toISOString() };
 }
 
 function presentOutcome(deal: Deal): Pick<DealAnswer, 'payout' | 'refund' | 'contest' | 'endReason'> {
-  const { payout, refund, contestedAt } = deal;
+  const { contestedAt } = deal;
+  const payout = deal.payout ?? null;
+  const refund = deal.refund ?? null;
   return {
     payout:
-      payout == null
+      payout === null
         ? null
         : {
             state: payout.state,
@@ -87,7 +84,7 @@ function presentOutcome(deal: Deal): Pick<DealAnswer, 'payout' | 'refund' | 'con
             failureCode: payout.failureCode,
             paidAt: iso(payout.paidAt),
           },
-    refund: refund == null ? null : { state: refund.state, amount: usd(refund.amountMinor) },
+    refund: refund === null ? null : { state: refund.state, amount: usd(refund.amountMinor) },
     contest:
       contestedAt === null
         ? null

@@ -7,47 +7,28 @@ import {
   purchaseRequest,
   receiptRequest,
   shipRequest,
-  type DealAnswer,
 } from '#shared/schemas/deals.ts';
 import { lotParams } from '#shared/schemas/lots.ts';
 import { NotFoundError } from '#server/app-error.ts';
 import { withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
-import { databaseNow, withTransaction, type Unit } from '#server/database/transaction.ts';
+import { databaseNow } from '#server/database/transaction.ts';
 import { lotIdOf } from '#server/features/lots/own-lot.ts';
 import { newestQuotes } from '#server/features/quotes/quote-queries.ts';
 import { renderSheetPdf } from '#server/features/sheets/sheet-pdf.ts';
-import type { Deal } from '#server/models/deal.ts';
-import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
+import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
 import { acceptDeal } from './accept-deal.ts';
+import { answerDeal, changeDeal } from './answer-deal.ts';
 import { confirmDelivery } from './confirm-delivery.ts';
 import { contestDeal } from './contest-deal.ts';
 import { sideOf } from './deal-policy.ts';
-import { presentDeal, presentDeals, sheetFor } from './deal-presenter.ts';
+import { presentDeals } from './deal-presenter.ts';
 import { findDealIds, listDealsOf, loadDealView } from './deal-queries.ts';
+import { sheetFor } from './deal-sheets.ts';
 import { purchaseLot } from './purchase-lot.ts';
 import { recordReceipt } from './record-receipt.ts';
 import { shipDeal } from './ship-deal.ts';
 
 type DealParams = z.infer<typeof dealParams>;
-
-/** The deal as it stands now, for its sides and the desk. */
-async function answerDeal(dealId: string, actor: Actor, unit?: Unit): Promise<DealAnswer> {
-  const now = unit?.now ?? (await databaseNow());
-  return presentDeal(await loadDealView(dealId, unit?.tx), actor, now);
-}
-
-/** Runs a command under the deal's lock and answers with the deal after it. */
-async function changeDeal(
-  code: string,
-  actor: Actor,
-  change: (dealId: string, unit: Unit) => Promise<Deal>,
-): Promise<DealAnswer> {
-  const { id } = await findDealIds(code);
-  return withTransaction({ deals: [id] }, async (unit) => {
-    await change(id, unit);
-    return answerDeal(id, actor, unit);
-  });
-}
 
 const purchaseRoute = defineRoute<z.infer<typeof lotParams>, unknown, z.infer<typeof purchaseRequest>>({
   method: 'post',

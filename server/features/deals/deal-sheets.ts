@@ -1,7 +1,7 @@
 import { MeasureError } from '#shared/domain-error.ts';
 import { minorToAmount } from '#shared/money.ts';
 import { ENGINE_VERSION, refinedSheet } from '#shared/settlement/refined-sheet.ts';
-import type { QuoteRef, RefinedSheetInput } from '#shared/settlement/sheet-types.ts';
+import type { QuoteRef, RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
 import { ConflictError, invariant } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
@@ -10,6 +10,7 @@ import type { Deal } from '#server/models/deal.ts';
 import { DealSheet } from '#server/models/deal-sheet.ts';
 import type { Lot } from '#server/models/lot.ts';
 import { LotAssay } from '#server/models/lot-assay.ts';
+import type { DealSide } from './deal-policy.ts';
 
 type Terms = Pick<Deal, 'commissionPercent' | 'commissionMinimumMinor' | 'paymentMethod'>;
 
@@ -87,4 +88,9 @@ export async function storeFinalSheets(dealId: string, unit: Unit): Promise<Deal
   });
   invariant(provisional !== null, 'a deal has its provisional sheet');
   return storeDealSheets(dealId, 'final', provisional.input as RefinedSheetInput, unit);
+}
+
+/** The seller's sheet carries the commission, which is not the buyer's business. */
+export function sheetFor(side: DealSide, stored: DealSheet): SettlementSheet {
+  return (side === 'buyer' ? stored.buyerSheet : stored.sellerSheet) as SettlementSheet;
 }

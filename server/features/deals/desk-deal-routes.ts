@@ -1,29 +1,16 @@
 import type { z } from 'zod';
-import { dealAnswer, dealParams, rulingRequest, type DealAnswer } from '#shared/schemas/deals.ts';
+import { dealAnswer, dealParams, rulingRequest } from '#shared/schemas/deals.ts';
 import { deskDealsAnswer } from '#shared/schemas/desk.ts';
 import { reasonRequest } from '#shared/schemas/lots.ts';
 import { withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
-import { withTransaction, type Unit } from '#server/database/transaction.ts';
-import type { Deal } from '#server/models/deal.ts';
-import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
-import { presentContestedDeals, presentDeal } from './deal-presenter.ts';
-import { findDealIds, listContestedDeals, loadDealView } from './deal-queries.ts';
+import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
+import { answerDeal, changeDeal } from './answer-deal.ts';
+import { presentContestedDeals } from './deal-presenter.ts';
+import { findDealIds, listContestedDeals } from './deal-queries.ts';
 import { freezeDeal, unfreezeDeal } from './freeze-deal.ts';
 import { ruleDeal } from './rule-deal.ts';
 
 type DealParams = z.infer<typeof dealParams>;
-
-async function changeDeal(
-  code: string,
-  actor: Actor,
-  change: (dealId: string, unit: Unit) => Promise<Deal>,
-): Promise<DealAnswer> {
-  const { id } = await findDealIds(code);
-  return withTransaction({ deals: [id] }, async (unit) => {
-    await change(id, unit);
-    return presentDeal(await loadDealView(id, unit.tx), actor, unit.now);
-  });
-}
 
 export const deskDealRoutes: RouteDefinition[] = [
   defineRoute({
@@ -52,8 +39,7 @@ export const deskDealRoutes: RouteDefinition[] = [
       const locks = { lots: [lotId], deals: [id] };
       const { status, answer } = await withIdempotentTransaction(idempotency, locks, async (unit) => {
         await ruleDeal({ ...body, dealId: id }, unit, actor);
-        const view = await loadDealView(id, unit.tx);
-        return { status: 200, answer: presentDeal(view, actor, unit.now) };
+        return { status: 200, answer: await answerDeal(id, actor, unit) };
       });
       res.status(status).json(answer);
     },

@@ -52,7 +52,7 @@ export async function recordReceipt(
     ['delivered'],
     'The mass is recorded after the delivery and before accepting or contesting.',
   );
-  if (deal.receipt != null)
+  if ((deal.receipt ?? null) !== null)
     throw new ConflictError('illegal-transition', 'The received mass is recorded already.');
   const { entry, grams } = readMass(input.mass);
   await assertOwnPhoto(input.photoFileId, unit, actor);
