@@ -14,10 +14,10 @@ import { lotRoutes } from '#server/features/lots/lot-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
 import { registerRoutes } from '#server/features/register/register-routes.ts';
 import { valuationRoutes } from '#server/features/valuations/valuation-routes.ts';
-import type { RouteDefinition } from './define-route.ts';
+import { describeApi } from './api-description.ts';
+import { defineRoute, type RouteDefinition } from './define-route.ts';
 
-/** Every route of the product. A test walks the mounted router and fails on one that does not stand here. */
-export const allRoutes: readonly RouteDefinition[] = [
+const productRoutes: readonly RouteDefinition[] = [
   ...sessionRoutes,
   ...quoteRoutes,
   ...dealRoutes,
@@ -35,3 +35,20 @@ export const allRoutes: readonly RouteDefinition[] = [
   ...documentRoutes,
   ...valuationRoutes,
 ];
+
+let description: unknown;
+
+const descriptionRoute = defineRoute({
+  method: 'get',
+  path: '/api/v1/openapi.json',
+  summary: 'This description of the API (OpenAPI 3.1)',
+  access: 'public',
+  limit: 'read',
+  handle: ({ res }) => {
+    description ??= describeApi(allRoutes);
+    res.json(description);
+  },
+});
+
+/** Every route of the product. A test walks the mounted router and fails on one that does not stand here. */
+export const allRoutes: readonly RouteDefinition[] = [...productRoutes, descriptionRoute];

@@ -85,6 +85,22 @@ describe('the route registry', () => {
     }
   });
 
+  it('describes every route of the API, and nothing else', async () => {
+    const answer = await (await app.visitor()).get('/api/v1/openapi.json').expect(200);
+    const described = Object.entries(answer.body.paths as Record<string, Record<string, unknown>>).flatMap(
+      ([path, methods]) =>
+        Object.keys(methods).map((method) => `${method} ${path.replaceAll(/\{(\w+)\}/g, ':$1')}`),
+    );
+    expect(described.sort()).toEqual(allRoutes.map((route) => `${route.method} ${route.path}`).sort());
+    expect(answer.body.openapi).toBe('3.1.0');
+    const purchase = answer.body.paths['/api/v1/lots/{code}/purchase'].post;
+    const headers = purchase.parameters.filter((parameter: { in: string }) => parameter.in === 'header');
+    expect(headers.map((header: { name: string }) => header.name).sort()).toEqual([
+      'Idempotency-Key',
+      'X-CSRF-Token',
+    ]);
+  });
+
   it('answers an unknown address of the API with a problem document', async () => {
     const answer = await (await app.visitor()).get('/api/v1/nothing-like-it').expect(404);
     expect(answer.headers['content-type']).toContain('application/problem+json');

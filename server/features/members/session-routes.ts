@@ -3,7 +3,7 @@ import { profileRequest, sessionAnswer, signInRequest, signUpRequest } from '#sh
 import { AppError } from '#server/app-error.ts';
 import { withTransaction } from '#server/database/transaction.ts';
 import { csrfTokenOf } from '#server/middleware/csrf.ts';
-import { createMember } from '#server/features/members/create-member.ts';
+import { signUpMember } from '#server/features/members/sign-up-member.ts';
 import { actorOf, findMember } from '#server/features/members/member-queries.ts';
 import { presentMember } from '#server/features/members/member-presenter.ts';
 import { hashPassword } from '#server/features/members/passwords.ts';
@@ -71,7 +71,7 @@ export const sessionRoutes: RouteDefinition[] = [
       const { email, password, displayName, region, timeZone } = body;
       const passwordHash = await hashPassword(password);
       const member = await withTransaction({}, (unit) =>
-        createMember({ email, passwordHash, displayName, region, timeZone, role: 'member' }, unit),
+        signUpMember({ email, passwordHash, displayName, region, timeZone }, unit),
       );
       await startSession(req, actorOf(member));
       await answerSession(req, res, member.id, 201);
