@@ -25,6 +25,8 @@ export const pageRoutes: RouteObject[] = [
   { path: '/sell', lazy: () => import('../routes/sell.tsx') },
   { path: '/sell/:code', lazy: () => import('../routes/draft.tsx') },
   { path: '/account', lazy: () => import('../routes/account.tsx') },
+  { path: '/methods', lazy: () => import('../routes/methods.tsx') },
+  { path: '/cautions', lazy: () => import('../routes/cautions.tsx') },
 ];
 
 export const notFoundRoute: RouteObject = { path: '*', lazy: () => import('../routes/not-found.tsx') };

@@ -1,0 +1,3 @@
+import { CautionsPage } from '../features/methods/components/cautions-page.tsx';
+
+export const Component = CautionsPage;

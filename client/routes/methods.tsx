@@ -1,0 +1,3 @@
+import { MethodsPage } from '../features/methods/components/methods-page.tsx';
+
+export const Component = MethodsPage;
