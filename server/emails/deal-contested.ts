@@ -13,13 +13,13 @@ const input = z.object({
 export const dealContested = defineMail({
   audience: 'buyer and seller',
   trigger: 'the buyer contested',
-  says: 'what is contested, that the money is frozen, by when the desk rules',
+  says: 'what is contested, that the money stays held, by when the desk rules',
   input,
   write: ({ dealCode, lotTitle, side, reason, note, decideBy }, { timeZone }) => ({
     subject: `Contested: ${lotTitle}`,
     heading: side === 'buyer' ? 'Your objection is with the desk' : 'The buyer contests the deal',
     paragraphs: [
-      `The deal over “${lotTitle}” is frozen: nothing is paid out or refunded until the desk has ruled.`,
+      `The deal over “${lotTitle}” is contested: the money stays held, and nothing is paid out or refunded until the desk has ruled.`,
       `In the buyer’s words: “${note}”`,
     ],
     facts: [
