@@ -57,11 +57,23 @@ function momentText(at: Date | string, timeZone: string): string {
 /** What the embedded Latin faces can draw; anything else would print as an empty box. */
 const UNDRAWN = /[^\u0020-\u007e\u00a0-\u00ff\u2013\u2014\u2018-\u201d\u2026\u2212]/gu;
 
+/** Letters whose stroke is no combining mark, so that decomposing does not find the plain one. */
+const PLAIN: Readonly<Record<string, string>> = {
+  ł: 'l',
+  Ł: 'L',
+  đ: 'd',
+  Đ: 'D',
+  ħ: 'h',
+  ı: 'i',
+  œ: 'oe',
+  Œ: 'OE',
+};
+
 /** Letters beyond Latin-1 lose their marks; what has no plain letter becomes a question mark. */
 function printable(text: string): string {
   return text
     .replace(/\s*‰/g, ' per mille')
-    .replace(UNDRAWN, (sign) => sign.normalize('NFD').replace(/\p{M}/gu, ''))
+    .replace(UNDRAWN, (sign) => PLAIN[sign] ?? sign.normalize('NFD').replace(/\p{M}/gu, ''))
     .replace(UNDRAWN, '?');
 }
 
@@ -142,7 +154,7 @@ function lineRow(doc: Doc, line: SheetLine): void {
   }
   if (line.rate !== null) {
     figureAtDot(doc, line.rate.value, COLUMNS.rate, y + 0.5);
-    unitAfter(doc, line.rate.value, line.rate.unit.replace('US$', 'US$ '), COLUMNS.rate, y + 0.5);
+    unitAfter(doc, line.rate.value, line.rate.unit, COLUMNS.rate, y + 0.5);
   }
   if (line.amount !== null) figureAtDot(doc, line.amount, COLUMNS.amount, y + 0.5);
   doc.y = y + 15;
