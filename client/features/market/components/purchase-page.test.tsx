@@ -5,8 +5,8 @@ import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { apiServer } from '#tests/setup/api-server.ts';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { leaveTo } from '../../../lib/leave-to.ts';
-import { buildLot, buildMember } from '../testing/build-answers.ts';
-import { openPage } from '../testing/open-page.tsx';
+import { buildLot, buildMember } from '#tests/factories/build-market-answers.ts';
+import { openPage } from '#tests/helpers/open-page.tsx';
 
 vi.mock('../../../lib/leave-to.ts', () => ({ leaveTo: vi.fn() }));
 beforeEach(() => vi.mocked(leaveTo).mockReset());

@@ -3,8 +3,8 @@ import userEvent from '@testing-library/user-event';
 import { http, HttpResponse } from 'msw';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { apiServer } from '#tests/setup/api-server.ts';
-import { buildMember, buildRegister, buildRow } from '../testing/build-answers.ts';
-import { openPage } from '../testing/open-page.tsx';
+import { buildMember, buildRegister, buildRow } from '#tests/factories/build-market-answers.ts';
+import { openPage } from '#tests/helpers/open-page.tsx';
 
 afterEach(() => vi.restoreAllMocks());
 

@@ -5,8 +5,8 @@ import { afterEach, describe, expect, it, vi } from 'vitest';
 import { apiServer } from '#tests/setup/api-server.ts';
 import { MeasureError } from '#shared/domain-error.ts';
 import { valuate, type ValuationRequest } from '#shared/settlement/valuation.ts';
-import { buildQuotes } from '../testing/build-answers.ts';
-import { openPage } from '../testing/open-page.tsx';
+import { buildQuotes } from '#tests/factories/build-market-answers.ts';
+import { openPage } from '#tests/helpers/open-page.tsx';
 
 afterEach(() => vi.restoreAllMocks());
 

@@ -3,11 +3,11 @@ import { configure, render } from '@testing-library/react';
 import { http, HttpResponse } from 'msw';
 import { createMemoryRouter, RouterProvider } from 'react-router-dom';
 import { vi } from 'vitest';
-import { apiServer } from '#tests/setup/api-server.ts';
+import { apiServer } from '../setup/api-server.ts';
 import type { MemberAnswer } from '#shared/schemas/session.ts';
-import { appRoutes } from '../../../app/router.tsx';
-import { queryClient } from '../../../lib/query-client.ts';
-import { buildQuotes } from './build-answers.ts';
+import { appRoutes } from '#client/app/router.tsx';
+import { queryClient } from '#client/lib/query-client.ts';
+import { buildQuotes } from '../factories/build-market-answers.ts';
 
 // Pages are lazy modules: the first one of a run takes its time on a busy machine.
 configure({ asyncUtilTimeout: 8_000 });
