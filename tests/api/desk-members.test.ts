@@ -8,6 +8,7 @@ import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
 import { OutboxMail } from '#server/models/outbox-mail.ts';
 import { SessionRow } from '#server/models/session-row.ts';
+import { buildDeal } from '#tests/factories/build-deal.ts';
 import { buildDeskCase } from '#tests/factories/build-desk-case.ts';
 import { buildMember, type BuiltMember } from '#tests/factories/build-member.ts';
 import { startTestApp, type Visitor } from '#tests/helpers/test-app.ts';
@@ -143,7 +144,14 @@ describe('pulling a lot', () => {
     expect(twice.body.code).toBe('illegal-transition');
   });
 
-  it('refuses while a deal runs over it, on an own lot, on a draft, and for anyone else', async () => {
+  it.each(['agreed', 'funded'] as const)('refuses while a deal that is %s runs over it', async (state) => {
+    const deal = await buildDeal({ state });
+    const refused = await pull(deal.lot.code).expect(409);
+    expect(refused.body.code).toBe('illegal-transition');
+    expect((await Lot.findByPk(deal.lot.id))!.pulledByDesk).toBe(false);
+  });
+
+  it('refuses a reserved lot, an own lot, a draft, and anyone else', async () => {
     const running = await buildDeskCase();
     await Lot.update({ state: 'reserved' }, { where: { id: running.lotId } });
     const refused = await pull(running.code).expect(409);

@@ -2,9 +2,9 @@ import { dec, plain } from '#shared/decimal.ts';
 import type { CaseAnswer, QueueRow } from '#shared/schemas/desk.ts';
 import { z } from 'zod';
 import { registerEntryOf } from '#server/features/laboratories/laboratory-queries.ts';
+import { photoAnswerOf } from '#server/features/photos/photo-answer.ts';
 import type { Certificate } from '#server/models/certificate.ts';
 import type { LotEvent } from '#server/models/lot-event.ts';
-import type { LotPhoto } from '#server/models/lot-photo.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { gradeCase, massesOf } from './case-evidence.ts';
 import type { flagCase } from './case-flags.ts';
@@ -49,20 +49,6 @@ export function presentQueueRow(
       claim: canOnCase(actor, 'claim', { certificate, lot }),
       open: canOnCase(actor, 'open', { certificate, lot }),
     },
-  };
-}
-
-function presentPhoto(photo: LotPhoto): CaseAnswer['lot']['photos'][number] {
-  const at = (size: string) => `/api/v1/photos/${photo.id}/${size}`;
-  return {
-    id: photo.id,
-    caption: photo.caption,
-    isDrawing: photo.isDrawing,
-    thumb: at('240'),
-    medium: at('960'),
-    large: at('2000'),
-    width: photo.file?.width ?? 0,
-    height: photo.file?.height ?? 0,
   };
 }
 
@@ -126,7 +112,7 @@ function presentLot(
       method: assay.method,
       isPaidFor: assay.isPaidFor,
     })),
-    photos: photos.map(presentPhoto),
+    photos: photos.map(photoAnswerOf),
     history: events.map(presentEvent),
     state: lot.state,
   };

@@ -1,6 +1,7 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
 import type { CaseAnswer } from '#shared/schemas/desk.ts';
 import { GradeStamp } from '../../../components/figures/lot-words.tsx';
+import { Notice } from '../../../components/ui/notice.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { caseQuery } from '../api/certificates.ts';
 import { CaseDecision, CaseLot } from './case-lot.tsx';
@@ -13,13 +14,30 @@ import { FlagList } from './flag-list.tsx';
 import { PullLotForm } from './pull-lot-form.tsx';
 import { ReportFacts } from './report-facts.tsx';
 
+/** What verification would come to, said before anyone sets to work. */
+function Outlook({ view }: { view: CaseAnswer }) {
+  if (view.proposedGrade === 'certified')
+    return (
+      <Notice tone="good">
+        As entered, verification makes it <GradeStamp grade="certified" /> and opens the lot.
+      </Notice>
+    );
+  return (
+    <Notice tone="attention" title="As entered, this cannot be certified">
+      <ul className="list-disc pl-5">
+        {view.gaps.map((gap) => (
+          <li key={gap}>{gap}</li>
+        ))}
+      </ul>
+    </Notice>
+  );
+}
+
 function Deciding({ view }: { view: CaseAnswer }) {
   return (
     <section aria-labelledby="deciding-heading" className="sheet flex flex-col gap-5 p-4 sm:p-6">
       <h2 id="deciding-heading">Deciding</h2>
-      <p>
-        If verified as entered, the grade is <GradeStamp grade={view.proposedGrade} />
-      </p>
+      <Outlook view={view} />
       <ClaimPanel view={view} />
       {view.can.verify && <DecidePanel view={view} />}
     </section>

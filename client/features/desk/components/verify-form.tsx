@@ -2,7 +2,6 @@ import { useSuspenseQuery } from '@tanstack/react-query';
 import { verifyRequest, type CaseAnswer } from '#shared/schemas/desk.ts';
 import { Field } from '../../../components/ui/field.tsx';
 import { Checkbox, Select, TextInput } from '../../../components/ui/inputs.tsx';
-import { Notice } from '../../../components/ui/notice.tsx';
 import { sendCaseAct } from '../api/certificates.ts';
 import { laboratoriesQuery } from '../api/laboratories.ts';
 import { useActForm } from '../hooks/use-act-form.ts';
@@ -12,20 +11,6 @@ import { ActForm } from './act-form.tsx';
 function outcomeOf(view: CaseAnswer): string {
   if (view.state === 'verified') return 'Verified: the lot is open.';
   return 'Examined: the lot stays with the desk, and the seller is told why.';
-}
-
-function Outlook({ view }: { view: CaseAnswer }) {
-  if (view.proposedGrade === 'certified')
-    return <Notice tone="good">As entered, verification certifies the lot and opens it.</Notice>;
-  return (
-    <Notice tone="attention" title="As entered, this would only be examined">
-      <ul className="list-disc pl-5">
-        {view.gaps.map((gap) => (
-          <li key={gap}>{gap}</li>
-        ))}
-      </ul>
-    </Notice>
-  );
 }
 
 /** How, with whom and when the report was confirmed; the grade follows from it and from the figures. */
@@ -70,7 +55,6 @@ export function VerifyForm({ view }: { view: CaseAnswer }) {
       consequence={`You say that ${laboratory?.name ?? 'the laboratory'} confirmed report ${view.report.number}. Without a gap the lot opens at once as certified; else it stays with the desk as examined.`}
       confirmText={`Verify report ${view.report.number}`}
     >
-      <Outlook view={view} />
       <Field
         id={form.fieldId('laboratoryId')}
         label="Laboratory on the register"
