@@ -9,6 +9,22 @@ import { queryClient } from '../lib/query-client.ts';
 import { chooseTheme } from '../lib/theme.ts';
 import { appRoutes } from './router.tsx';
 
+const noQuotes = {
+  now: '2026-12-01T14:00:00Z',
+  state: 'none',
+  marketUntil: null,
+  staleAfterSeconds: 300,
+  quotes: [],
+};
+const noLots = {
+  rows: [],
+  nextCursor: null,
+  count: 0,
+  isCountCapped: false,
+  quoteState: 'none',
+  quotedAt: null,
+};
+
 function open(path: string) {
   vi.spyOn(window, 'scrollTo').mockImplementation(() => undefined);
   const router = createMemoryRouter(appRoutes, { initialEntries: [path] });
@@ -22,7 +38,11 @@ function open(path: string) {
 
 beforeEach(() => {
   queryClient.clear();
-  apiServer.use(http.get('/api/v1/session', () => HttpResponse.json({ csrfToken: 't', member: null })));
+  apiServer.use(
+    http.get('/api/v1/session', () => HttpResponse.json({ csrfToken: 't', member: null })),
+    http.get('/api/v1/quotes', () => HttpResponse.json(noQuotes)),
+    http.get('/api/v1/lots', () => HttpResponse.json(noLots)),
+  );
 });
 
 afterEach(() => {
