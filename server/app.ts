@@ -39,6 +39,7 @@ export function createApp(): { app: Express; close: () => void } {
   );
   app.use('/api', nothingHere);
   serveClient(app);
+  app.use(nothingHere);
   app.use(errorHandler);
   return { app, close: session.close };
 }

@@ -13,7 +13,7 @@ export function serveClient(app: Express): void {
     express.static(path.join(folder, 'assets'), { immutable: true, maxAge: '365d', fallthrough: false }),
   );
   app.use(express.static(folder, { index: false, maxAge: '5m' }));
-  app.get('/*splat', (_req, res) => {
+  app.get(['/', '/*splat'], (_req, res) => {
     res.set('Cache-Control', 'no-cache').sendFile(page);
   });
 }

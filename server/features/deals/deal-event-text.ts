@@ -20,6 +20,8 @@ const TEXTS: Readonly<Record<string, (detail: Detail) => string>> = {
   funded: () => 'Paid into escrow',
   lapsed: () => 'Not paid in time: the purchase lapsed',
   'late-payment': () => 'A payment came after the lapse and is sent back',
+  'second-payment': () => 'A second payment came in and is sent back',
+  'second-refunded': () => 'The second payment is sent back',
   shipped: (detail) => `Shipped with ${word(detail, 'carrier')}, insured for US$ ${word(detail, 'insured')}`,
   'parcel-moved': (detail) => `Parcel: ${word(detail, 'status').replaceAll('_', ' ')}`,
   'parcel-lost': () => 'The carrier declares the parcel lost',

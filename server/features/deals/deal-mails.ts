@@ -207,6 +207,17 @@ export async function mailLatePayment(deal: Deal, unit: Unit): Promise<void> {
   await enqueueMail({ mail: 'late-payment-refunded', memberId: deal.buyerId, uniqueKey, input }, unit);
 }
 
+/** A second payment of a deal that was paid before; sent back while the deal goes on. */
+export async function mailSecondPayment(
+  deal: Deal,
+  { chargeId, amountMinor }: { chargeId: string; amountMinor: bigint },
+  unit: Unit,
+): Promise<void> {
+  const input = { ...(await subjectOf(deal, unit)), total: minorToAmount(amountMinor) };
+  const uniqueKey = `second-payment:${chargeId}`;
+  await enqueueMail({ mail: 'second-payment-refunded', memberId: deal.buyerId, uniqueKey, input }, unit);
+}
+
 export async function mailDealContested(
   deal: Deal,
   { reason, note }: { reason: keyof typeof CONTEST_REASON_LABELS; note: string },

@@ -12,17 +12,19 @@ describe('compareReceivedMass', () => {
   });
 
   it('allows what a coarser scale cannot tell', () => {
-    // k = 2 times the root of 0.01²/12 + 0.1²/12 = 0.058 g
+    // One step of each: 0.01 g + 0.1 g.
     expect(compareReceivedMass(lot, { value: '31.6', unit: 'g' })).toEqual({
       differenceGrams: '-0.02',
       isWithinScales: true,
     });
-    expect(compareReceivedMass(lot, { value: '31.7', unit: 'g' }).isWithinScales).toBe(false);
+    expect(compareReceivedMass(lot, { value: '31.7', unit: 'g' }).isWithinScales).toBe(true);
+    expect(compareReceivedMass(lot, { value: '31.8', unit: 'g' }).isWithinScales).toBe(false);
   });
 
   it('sees a difference beyond both scales', () => {
-    expect(compareReceivedMass(lot, { value: '31.60', unit: 'g' })).toEqual({
-      differenceGrams: '-0.02',
+    expect(compareReceivedMass(lot, { value: '31.60', unit: 'g' }).isWithinScales).toBe(true);
+    expect(compareReceivedMass(lot, { value: '31.59', unit: 'g' })).toEqual({
+      differenceGrams: '-0.03',
       isWithinScales: false,
     });
   });
@@ -38,6 +40,6 @@ describe('compareReceivedMass', () => {
   it('takes the last digit typed where the lot gives no readability', () => {
     const silent = { ...lot, readabilityValue: null, readabilityUnit: null };
     expect(compareReceivedMass(silent, { value: '31.625', unit: 'g' }).isWithinScales).toBe(true);
-    expect(compareReceivedMass(silent, { value: '31.635', unit: 'g' }).isWithinScales).toBe(false);
+    expect(compareReceivedMass(silent, { value: '31.632', unit: 'g' }).isWithinScales).toBe(false);
   });
 });

@@ -1,15 +1,14 @@
 import { dec, fixed, lastDigitOf, plain } from '#shared/decimal.ts';
 import { GRAMS_PER_UNIT, toGrams, type MassUnit } from '#shared/mass.ts';
-import { COVERAGE_FACTOR, readabilityUncertainty, rss } from '#shared/uncertainty.ts';
 import { invariant } from '#server/app-error.ts';
 import type { Lot } from '#server/models/lot.ts';
 
 type Weighed = Pick<Lot, 'grossValue' | 'grossUnit' | 'readabilityValue' | 'readabilityUnit'>;
 
 /**
- * Received mass against the lot's gross mass: the difference in grams, and whether it lies within the expanded uncertainty
- * (k = 2) of the two weighings together (GUM 5.1.2, each balance's readability as a rectangle). The receiver's readability
- * is one unit of the last digit typed.
+ * Received mass against the lot's gross mass: the difference in grams, and whether two balances may show it for one piece.
+ * Each may be off by one unit of its last digit (common practice: the display's step either way), so the two together by the
+ * sum of both steps. The receiver's readability is one unit of the last digit typed.
  */
 export function compareReceivedMass(
   lot: Weighed,
@@ -24,8 +23,6 @@ export function compareReceivedMass(
       ? stepOf(gross)
       : dec(lot.readabilityValue).times(GRAMS_PER_UNIT[lot.readabilityUnit as MassUnit]);
   const difference = toGrams(typed).minus(toGrams(gross));
-  const allowed = rss([readabilityUncertainty(lotStep), readabilityUncertainty(stepOf(typed))]).times(
-    COVERAGE_FACTOR,
-  );
+  const allowed = lotStep.plus(stepOf(typed));
   return { differenceGrams: plain(dec(fixed(difference, 6))), isWithinScales: difference.abs().lte(allowed) };
 }
