@@ -12,7 +12,7 @@ import type {
   ProviderTaskHandler,
   ProviderTaskHandlers,
 } from '#server/features/payments/provider-task-handler.ts';
-import { PaymentProviderError } from '#server/integrations/payment-errors.ts';
+import { needsNewKey, PaymentProviderError } from '#server/integrations/payment-errors.ts';
 import { logger } from '#server/logger.ts';
 import type { ProviderTask } from '#server/models/provider-task.ts';
 
@@ -51,7 +51,7 @@ async function fail(task: ProviderTask, error: unknown): Promise<TaskOutcome> {
     : error instanceof Error
       ? error.message
       : 'unknown';
-  const isDefinite = isKnown && error.kind === 'refused';
+  const isDefinite = needsNewKey(error);
   logger.warn(
     { err: error as Error, task: task.id, kind: task.kind, tries: task.tries },
     'provider task failed',

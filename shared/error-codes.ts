@@ -40,6 +40,7 @@ export const ERROR_CODES = {
   'deal-not-funded': { status: 409, title: 'Nothing is held in escrow for this deal' },
   'deal-frozen': { status: 409, title: 'The desk has frozen this deal' },
   'deadline-passed': { status: 409, title: 'The deadline has passed' },
+  'payment-refused-by-provider': { status: 409, title: 'The payment provider refuses this' },
   'payment-provider-unavailable': { status: 503, title: 'The payment provider does not answer' },
   'quote-service-unavailable': { status: 503, title: 'The quote service does not answer' },
   'carrier-unavailable': { status: 503, title: 'The carrier does not answer' },

@@ -23,8 +23,11 @@ export const DESCRIPTION_LENGTH_MAX = 4000;
 
 /** Lowest price of a lot, in minor units of US dollars. */
 export const PRICE_MINOR_MIN = 2_000n;
-/** Highest price of a lot, in minor units: beyond it a signature on a screen is not enough. */
-export const PRICE_MINOR_MAX = 1_000_000_000n;
+/** The most that one card payment carries, in minor units: US$ 999,999.99, as the payment provider publishes it. */
+export const PAYMENT_MINOR_MAX = 99_999_999n;
+/** Highest price of a lot and highest charge for its parcel, in minor units: together still one card payment. */
+export const PRICE_MINOR_MAX = 99_000_000n;
+export const SHIPPING_MINOR_MAX = 999_999n;
 
 export const LOT_OPEN_DAYS_MAX = 90;
 export const REGISTER_PAGE_SIZE = 25;

@@ -102,7 +102,7 @@ describe('a complete draft', () => {
     ['1,234.50', 123_450n],
     ['20', 2_000n],
     ['700,5', 70_050n],
-    ['10000000.00', 1_000_000_000n],
+    ['990000.00', 99_000_000n],
   ])('reads a price typed as %s', (typed, minor) => {
     expect(
       checkLotDraft(
@@ -183,7 +183,8 @@ const REFUSED: [string, Change, string[]][] = [
   ['no price', (it) => (it.price = ''), ['number-missing at /price']],
   ['a price of 19.99', (it) => (it.price = '19.99'), ['price-too-low at /price']],
   ['a price below zero', (it) => (it.price = '-700'), ['price-too-low at /price']],
-  ['a price over the limit', (it) => (it.price = '10000000.01'), ['price-too-high at /price']],
+  ['a price over the limit', (it) => (it.price = '990000.01'), ['price-too-high at /price']],
+  ['a parcel over the limit', (it) => (it.shipping = '10000.00'), ['too-large at /shipping']],
   ['a price with 3 decimals', (it) => (it.price = '700.123'), ['too-many-decimals at /price']],
   ['an ambiguous price', (it) => (it.price = '1,234'), ['number-ambiguous at /price']],
   ['a price in words', (it) => (it.price = 'a lot'), ['not-a-decimal at /price']],

@@ -5,9 +5,10 @@ import {
   LOT_OPEN_DAYS_MAX,
   PRICE_MINOR_MAX,
   PRICE_MINOR_MIN,
+  SHIPPING_MINOR_MAX,
   TITLE_LENGTH_MAX,
 } from './limits.ts';
-import { AMOUNT_MAX_MINOR, fromAmount, minorToAmount } from './money.ts';
+import { fromAmount, minorToAmount } from './money.ts';
 import type { MassEntry } from './mass.ts';
 import { parseCertificate, type ParsedCertificate } from './lot-certificate.ts';
 import { readContent, readMass } from './lot-contents.ts';
@@ -206,7 +207,7 @@ export function checkPrice(minor: bigint): void {
     throw new MeasureError(
       'price-too-high',
       '/price',
-      `The highest price is US$ ${minorToAmount(PRICE_MINOR_MAX)}.`,
+      `The highest price is US$ ${minorToAmount(PRICE_MINOR_MAX)}: more than that a card cannot pay.`,
     );
   }
 }
@@ -215,8 +216,12 @@ function readShipping(text: string): bigint {
   const missing = 'Enter the charge for the insured parcel; 0 if you bear it.';
   const { minor } = fromAmount(typedDecimal(text, '/shipping', missing), '/shipping');
   if (minor < 0n) throw new MeasureError('amount-negative', '/shipping', 'This sum is never below zero.');
-  if (minor > AMOUNT_MAX_MINOR / 100n) {
-    throw new MeasureError('too-large', '/shipping', 'No parcel costs as much as that.');
+  if (minor > SHIPPING_MINOR_MAX) {
+    throw new MeasureError(
+      'too-large',
+      '/shipping',
+      `The highest charge for a parcel is US$ ${minorToAmount(SHIPPING_MINOR_MAX)}.`,
+    );
   }
   return minor;
 }

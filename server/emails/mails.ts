@@ -20,6 +20,7 @@ import { parcelShipped } from './parcel-shipped.ts';
 import { payoutFailed } from './payout-failed.ts';
 import { payoutSentBuyer } from './payout-sent-buyer.ts';
 import { payoutSentSeller } from './payout-sent-seller.ts';
+import { secondPaymentRefunded } from './second-payment-refunded.ts';
 import { welcome } from './welcome.ts';
 
 /** Every mail of the product by its name; the table in the developers' notes is made from here. */
@@ -44,6 +45,7 @@ export const MAILS = {
   'payout-failed': payoutFailed,
   'payout-sent-buyer': payoutSentBuyer,
   'payout-sent-seller': payoutSentSeller,
+  'second-payment-refunded': secondPaymentRefunded,
   welcome: welcome,
 } as const;
 

@@ -1,9 +1,10 @@
 /**
  * `unavailable`: no answer, or one that says nothing of the request; the same request comes again under the same key.
  * `refused`: a definite no; nothing happened at the provider, and the key is burnt.
+ * `burnt`: a failure that the provider keeps under the key and answers for ever; whether anything happened is not known.
  * `conflict`: the key was used for something else; a fault of ours.
  */
-export type PaymentFailureKind = 'unavailable' | 'refused' | 'conflict';
+export type PaymentFailureKind = 'unavailable' | 'refused' | 'burnt' | 'conflict';
 
 /** The payment provider did not do what was asked. */
 export class PaymentProviderError extends Error {
@@ -33,20 +34,32 @@ type SdkError = Error & {
   decline_code?: string;
   param?: string;
   statusCode?: number;
+  headers?: Record<string, string>;
 };
 
 function isSdkError(error: unknown): error is SdkError {
   return error instanceof Error && typeof (error as Partial<SdkError>).type === 'string';
 }
 
+/** A failure of the provider's own that it has kept: the same request under the same key will never get another answer. */
+function isKeptFailure({ statusCode = 0, headers = {} }: SdkError): boolean {
+  return statusCode >= 500 && headers['idempotent-replayed'] === 'true';
+}
+
 const UNAVAILABLE_TYPES = new Set(['StripeConnectionError', 'StripeAPIError', 'StripeRateLimitError']);
 
 function kindOf(error: SdkError): PaymentFailureKind {
   if (error.type === 'StripeIdempotencyError') return 'conflict';
+  if (isKeptFailure(error)) return 'burnt';
   if (UNAVAILABLE_TYPES.has(error.type)) return 'unavailable';
   // Wrong or revoked keys are ours to mend; the request itself was never looked at.
   if (error.statusCode === 401 || error.statusCode === 403) return 'unavailable';
   return 'refused';
+}
+
+/** Under its key the request will never succeed: it may be made anew, under the next. */
+export function needsNewKey(error: unknown): error is PaymentProviderError {
+  return error instanceof PaymentProviderError && (error.kind === 'refused' || error.kind === 'burnt');
 }
 
 /** Whatever the SDK threw, as the one error that the rest of the server knows. */

@@ -14,7 +14,7 @@ export class ProviderTask extends Model<
 > {
   declare id: string;
   declare dealId: string;
-  declare kind: 'expire_session' | 'refund' | 'transfer' | 'payout' | 'register_parcel';
+  declare kind: 'expire_session' | 'refund' | 'refund_second' | 'transfer' | 'payout' | 'register_parcel';
   declare idempotencyKey: string;
   /** Which key of this task is in use at the provider, and since when: a burnt or aged one gives way to the next. */
   declare keyVersion: CreationOptional<number>;

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { afterEach, describe, expect, it } from 'vitest';
+import { PAYMENT_MINOR_MAX } from '#shared/limits.ts';
 import { pinDatabaseTime } from '#server/database/transaction.ts';
 import { accountSumMinor, heldMinor } from '#server/features/ledger/ledger-queries.ts';
 import { Deal } from '#server/models/deal.ts';
@@ -166,6 +167,43 @@ describe('when the provider fails', () => {
     const sessions = await sessionsAtProvider(deal);
     expect(sessions).toHaveLength(1);
     expect(answer.body.url).toBe(sessions[0]!.value['url']);
+  });
+
+  it('goes on under the next key when the provider keeps a failure under the first', async () => {
+    const { deal, buyer } = await dealWithBuyer();
+    await payments.fault({ kind: '500', path: create, method: 'POST', count: 1, stage: 'saved' });
+    const answer = await start(buyer, deal).expect(200);
+    const sessions = await sessionsAtProvider(deal);
+    expect(sessions.map(({ value }) => value['url'])).toEqual([answer.body.url]);
+    expect(await Payment.findOne({ where: { dealId: deal.id } })).toMatchObject({
+      attempt: 2,
+      state: 'open',
+    });
+    expect(await payments.pay(await sessionOf(deal))).toBe('paid');
+    await becomes(deal, 'funded');
+  });
+
+  it('has one page for ten clicks at once when a failure is kept', async () => {
+    const { deal, buyer } = await dealWithBuyer();
+    await payments.fault({ kind: '500', path: create, method: 'POST', count: 1, stage: 'saved' });
+    const answers = await Promise.all(Array.from({ length: 10 }, () => start(buyer, deal)));
+    const urls = answers.filter(({ status }) => status === 200).map(({ body }) => body.url);
+    expect(urls.length).toBeGreaterThan(0);
+    expect(new Set(urls).size).toBe(1);
+    expect((await start(buyer, deal).expect(200)).body.url).toBe(urls[0]);
+    expect(await sessionsAtProvider(deal)).toHaveLength(1);
+  });
+
+  it('says of a definite refusal that it is one, and charges nothing', async () => {
+    const { deal, buyer } = await dealWithBuyer();
+    // One cent more than a card payment carries; a lot at such a price is refused before it is listed.
+    const tooMuch = { priceMinor: PAYMENT_MINOR_MAX, shippingMinor: 1n, totalMinor: PAYMENT_MINOR_MAX + 1n };
+    await Deal.update(tooMuch, { where: { id: deal.id } });
+    const refused = await start(buyer, deal).expect(409);
+    expect(refused.body).toMatchObject({ code: 'payment-refused-by-provider' });
+    expect(refused.body.detail).toMatch(/Nothing was charged/);
+    expect(await sessionsAtProvider(deal)).toEqual([]);
+    expect(await stateOf(deal)).toBe('agreed');
   });
 
   it('holds nothing and changes no state while it is down', async () => {

@@ -6,9 +6,11 @@ import { runChecksJob } from '#jobs/run-checks.ts';
 import { pinDatabaseTime } from '#server/database/transaction.ts';
 import { accountSumMinor, dealLedger, heldMinor } from '#server/features/ledger/ledger-queries.ts';
 import { settleDeal } from '#server/features/deals/settle-deal.ts';
-import { closePayment } from '#server/features/payments/apply-checkout.ts';
+import { applyCheckout, closePayment } from '#server/features/payments/apply-checkout.ts';
+import { checkoutOrder } from '#server/features/payments/checkout-order.ts';
 import { fundDeal } from '#server/features/payments/fund-deal.ts';
 import { lapseDeal } from '#server/features/payments/lapse-deal.ts';
+import { paymentClient } from '#server/integrations/clients.ts';
 import { logger } from '#server/logger.ts';
 import { AuditEntry } from '#server/models/audit-entry.ts';
 import { Deal } from '#server/models/deal.ts';
@@ -199,6 +201,41 @@ describe('money that cannot be taken', () => {
     );
     const mails = await OutboxMail.findAll({ where: { memberId: deal.buyer.id } });
     expect(mails.map(({ mail }) => mail)).toContain('late-payment-refunded');
+  });
+
+  it('is refunded in full when a deal is paid a second time; the deal goes on and is funded once', async () => {
+    const { deal, sessionId } = await opened();
+    const order = await checkoutOrder(
+      await Payment.findOne({ where: { dealId: deal.id }, rejectOnEmpty: true }),
+    );
+    const stray = await paymentClient().createCheckout({ ...order, idempotencyKey: `stray:${randomUUID()}` });
+    await payments.pay(sessionId);
+    await becomes(deal, 'funded');
+    const { totalMinor, code } = await dealRow(deal);
+    const gap = async () =>
+      (await accountSumMinor({ kind: 'provider' })) - (await payments.balance('platform'));
+    const gapBefore = await gap();
+    await payments.webhooks('duplicate');
+    expect(await payments.pay(stray.sessionId)).toBe('paid');
+    await eventually(async () =>
+      expect(await AuditEntry.count({ where: { act: 'return-second-payment', subjectId: code } })).toBe(1),
+    );
+    const reading = await paymentClient().readCheckout(stray.sessionId);
+    const again = await inDeal(deal, (unit) => applyCheckout({ dealId: deal.id, reading }, unit));
+    expect(again).toBe('already');
+    expect(await accountSumMinor({ kind: 'member_payable', memberId: deal.buyer.id })).toBe(-totalMinor);
+    await performProviderTasksJob.run({ now: new Date(), log: logger });
+    await performProviderTasksJob.run({ now: new Date(), log: logger });
+    expect(await heldMinor(deal.id)).toBe(totalMinor);
+    expect(await accountSumMinor({ kind: 'member_payable', memberId: deal.buyer.id })).toBe(0n);
+    expect((await dealRow(deal)).state).toBe('funded');
+    const refunds = (await payments.objects('refund')).filter(
+      ({ value }) => value['payment_intent'] === reading.paymentIntentId,
+    );
+    expect(refunds.map(({ value }) => BigInt(value['amount'] as number))).toEqual([totalMinor]);
+    expect(await gap()).toBe(gapBefore);
+    const mails = await OutboxMail.findAll({ where: { memberId: deal.buyer.id } });
+    expect(mails.filter(({ mail }) => mail === 'second-payment-refunded')).toHaveLength(1);
   });
 
   it.each([

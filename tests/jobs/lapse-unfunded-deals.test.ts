@@ -110,6 +110,14 @@ describe('the lapse of unfunded deals', () => {
     expect(open).toEqual([]);
   });
 
+  it('does not wait for ever for a session under whose key the provider keeps a failure', async () => {
+    const deal = await buildDeal();
+    await inDeal(deal, (unit) => prepareCheckout({ dealId: deal.id }, unit));
+    await payments.fault({ kind: '500', path: '/v1/checkout/sessions', method: 'POST', stage: 'saved' });
+    await lapseAt(deal, 1);
+    expect(await stateOf(deal)).toBe('lapsed');
+  });
+
   it('happens once with two runners at a time', async () => {
     const deal = await buildDeal();
     await openPage(deal);

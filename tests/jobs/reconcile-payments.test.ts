@@ -89,15 +89,15 @@ describe('reconciliation, when no message ever comes', () => {
 
 describe('the checks', () => {
   it('find nothing where the books agree, and the job keeps what it found', async () => {
-    expect(await runJob(runChecksJob)).toEqual({ checks: 5, breaches: {}, unanswered: [] });
+    expect(await runJob(runChecksJob)).toEqual({ checks: 6, breaches: {}, unanswered: [] });
     const lease = await JobLease.findByPk('run-checks', { rejectOnEmpty: true });
-    expect(lease).toMatchObject({ lastOutcome: 'done', lastDetail: { checks: 5, breaches: {} } });
+    expect(lease).toMatchObject({ lastOutcome: 'done', lastDetail: { checks: 6, breaches: {} } });
   });
 
   it('go on without the provider while it does not answer', async () => {
     await payments.fault({ kind: '429', path: '/v1/balance', count: 1 });
     expect(await runChecksJob.run({ now: new Date(), log: logger })).toEqual({
-      checks: 5,
+      checks: 6,
       breaches: {},
       unanswered: ['provider-balance'],
     });

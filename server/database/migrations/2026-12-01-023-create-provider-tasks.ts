@@ -5,7 +5,7 @@ export const up: Migration = async ({ context }) => {
     CREATE TABLE provider_tasks (
       id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL PRIMARY KEY,
       deal_id CHAR(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
-      kind VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (kind IN ('expire_session', 'refund', 'transfer', 'payout', 'register_parcel')),
+      kind VARCHAR(32) CHARACTER SET ascii COLLATE ascii_bin NOT NULL CHECK (kind IN ('expire_session', 'refund', 'refund_second', 'transfer', 'payout', 'register_parcel')),
       idempotency_key VARCHAR(255) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       key_version INT NOT NULL DEFAULT 1,
       key_since DATETIME(3) NULL,

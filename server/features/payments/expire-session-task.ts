@@ -1,6 +1,6 @@
 import { invariant } from '#server/app-error.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
-import { PaymentProviderError } from '#server/integrations/payment-errors.ts';
+import { needsNewKey, PaymentProviderError } from '#server/integrations/payment-errors.ts';
 import type { CheckoutReading } from '#server/integrations/payment-readings.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Payment } from '#server/models/payment.ts';
@@ -12,14 +12,14 @@ import { defineProviderTask } from './provider-task-handler.ts';
 
 /**
  * The answer that would have told us the session may have been lost: asked again under its key, the provider gives it. When
- * it refuses the order instead, there never was a session.
+ * it refuses the order instead, or keeps a failure under the key, there is no page that anyone could pay on.
  */
 async function recoverSession(payment: Payment): Promise<string | null> {
   if (payment.providerSessionId !== null) return payment.providerSessionId;
   try {
     return (await paymentClient().createCheckout(await checkoutOrder(payment))).sessionId;
   } catch (error) {
-    if (error instanceof PaymentProviderError && error.kind === 'refused') return null;
+    if (needsNewKey(error)) return null;
     throw error;
   }
 }

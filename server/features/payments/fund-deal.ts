@@ -15,9 +15,13 @@ import { Member } from '#server/models/member.ts';
 import { Payment } from '#server/models/payment.ts';
 import type { PaidCheckout } from './paid-checkout.ts';
 import { refundDeal } from './refund-deal.ts';
+import { returnSecondPayment } from './return-second-payment.ts';
 
-/** `late`: the deal had ended, the money goes back. `mismatch`: not what was ordered; nothing is booked, an admin is told. */
-export type FundOutcome = 'funded' | 'already' | 'late' | 'mismatch';
+/**
+ * `late`: the deal had ended, the money goes back. `second`: the deal was paid before, the second payment goes back.
+ * `mismatch`: not what was ordered; nothing is booked, an admin is told.
+ */
+export type FundOutcome = 'funded' | 'already' | 'late' | 'second' | 'mismatch';
 
 type Found = { deal: Deal; lot: Lot; payment: Payment };
 
@@ -115,7 +119,8 @@ async function sendBack({ deal }: Found, unit: Unit): Promise<void> {
 /**
  * Takes a payment that the provider confirmed: books it and the provider's fee, sells the lot, moves the deal to funded and
  * orders both mails. May be called any number of times, by webhook and by re-reading alike: the second call changes
- * nothing. A payment for a deal that has ended is booked and refunded in full; one that is not what was ordered is not
+ * nothing. A payment for a deal that has ended is booked and refunded in full, and so is a second payment of a deal that
+ * was paid before; one that is not what was ordered is not
  * booked. Locks: the lot and the deal are held by the caller; the escrow balance is locked here. Refuses nothing.
  */
 export async function fundDeal(
@@ -124,7 +129,12 @@ export async function fundDeal(
 ): Promise<FundOutcome> {
   const found = await find(dealId, unit);
   const { deal, payment } = found;
-  if (payment.state === 'paid' && payment.chargeId === checkout.chargeId) return 'already';
+  if (payment.state === 'paid') {
+    if (payment.chargeId === checkout.chargeId) return 'already';
+    if (checkout.currency === 'USD') {
+      return (await returnSecondPayment({ deal, checkout }, unit)) ? 'second' : 'already';
+    }
+  }
   const isOrdered =
     payment.state !== 'paid' &&
     checkout.currency === 'USD' &&

@@ -9,7 +9,7 @@ import { applyRefund } from './apply-refund.ts';
 import { findDealLocks } from './deal-locks.ts';
 import type { ProviderEventReader } from './provider-event-reader.ts';
 
-const CHANGED = new Set(['funded', 'late', 'closed']);
+const CHANGED = new Set(['funded', 'late', 'second', 'closed']);
 
 /** A session was paid or has expired: the session is read again and its present state applied. */
 export const readCheckoutEvent: ProviderEventReader = async (event) => {

@@ -4,7 +4,7 @@ import { AppError, ForbiddenError, NotFoundError, invariant } from '#server/app-
 import { storedAnswer, withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
 import { withTransaction } from '#server/database/transaction.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
-import { PaymentProviderError } from '#server/integrations/payment-errors.ts';
+import { needsNewKey } from '#server/integrations/payment-errors.ts';
 import type { CheckoutReading } from '#server/integrations/payment-readings.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Payment } from '#server/models/payment.ts';
@@ -45,14 +45,15 @@ type Started = { payment: Payment; reading: CheckoutReading };
 
 /**
  * Asks for the session under a key that stands for this attempt, so that any number of requests get the one session. An
- * order that waited too long is refused as such; it is renewed once.
+ * order that waited too long is refused as such, and a failure may be kept under the key: then it is renewed once. Of an
+ * attempt that was given up nobody has ever had the page, so there is never more than one that can be paid.
  */
 async function start(deal: Deal, prepared: Payment): Promise<Started> {
   const provider = paymentClient();
   try {
     return { payment: prepared, reading: await provider.createCheckout(await checkoutOrder(prepared)) };
   } catch (error) {
-    if (!(error instanceof PaymentProviderError) || error.kind !== 'refused') throw error;
+    if (!needsNewKey(error)) throw error;
     const payment = await withTransaction(locksOf(deal), (unit) =>
       renewCheckout({ dealId: deal.id, attempt: prepared.attempt }, unit),
     );

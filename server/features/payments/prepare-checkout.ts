@@ -67,8 +67,8 @@ export async function prepareCheckout({ dealId }: { dealId: string }, unit: Unit
 }
 
 /**
- * The provider refused the attempt as such, so no session came of it: the next attempt gets a fresh expiry and key. Does
- * nothing when another request has moved on already. Throws as `prepareCheckout`.
+ * The provider refused the attempt, or keeps a failure under its key, so no page came of it: the next attempt gets a fresh
+ * expiry and key. Does nothing when another request has moved on already. Throws as `prepareCheckout`.
  */
 export async function renewCheckout(
   { dealId, attempt }: { dealId: string; attempt: number },
