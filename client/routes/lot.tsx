@@ -1,6 +1,6 @@
 import { useParams, type LoaderFunctionArgs } from 'react-router-dom';
 import { isRouted } from '../app/routes.tsx';
-import { lotQuery } from '../features/market/api/lot-query.ts';
+import { lotQuery } from '../lib/lot-query.ts';
 import { LotPage } from '../features/market/components/lot-page.tsx';
 import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';

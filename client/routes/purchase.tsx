@@ -1,6 +1,6 @@
 import { redirect, useParams, type LoaderFunctionArgs } from 'react-router-dom';
-import { lotQuery } from '../features/market/api/lot-query.ts';
-import { PurchasePage } from '../features/market/components/purchase-page.tsx';
+import { lotQuery } from '../lib/lot-query.ts';
+import { PurchasePage } from '../features/purchase/components/purchase-page.tsx';
 import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';
 import { sessionQuery } from '../lib/session.ts';

@@ -1,6 +1,6 @@
 import { METALS } from '#shared/metals.ts';
-import { quoteHistoryQuery } from '../features/market/api/quote-history-query.ts';
-import { QuotesPage } from '../features/market/components/quotes-page.tsx';
+import { quoteHistoryQuery } from '../features/quotes/api/quote-history-query.ts';
+import { QuotesPage } from '../features/quotes/components/quotes-page.tsx';
 import { queryClient } from '../lib/query-client.ts';
 import { quotesQuery } from '../lib/quotes.ts';
 

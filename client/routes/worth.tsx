@@ -1,4 +1,4 @@
-import { WorthPage } from '../features/market/components/worth-page.tsx';
+import { WorthPage } from '../features/worth/components/worth-page.tsx';
 import { queryClient } from '../lib/query-client.ts';
 import { quotesQuery } from '../lib/quotes.ts';
 

@@ -9,7 +9,7 @@ import { Quantity } from '../../../components/figures/quantity.tsx';
 import { DataList, type DataListRow } from '../../../components/ui/data-list.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { formatDecimal, THIN } from '../../../lib/format.ts';
-import { shownPermille } from '../shown-figures.ts';
+import { shownPermille } from '../../../lib/shown-figures.ts';
 
 type Certificate = NonNullable<LotAnswer['certificate']>;
 

@@ -6,8 +6,9 @@ import { LinkButton } from '../../../components/ui/button.tsx';
 import { Deadline } from '../../../components/ui/time.tsx';
 import { formatMoney, formatPercent } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
-import { bandOf, totalOf } from '../shown-figures.ts';
-import { sheetQuotedAt, stateWords } from './lot-words.ts';
+import { bandOf, totalOf } from '../../../lib/shown-figures.ts';
+import { stateWords } from '../../../components/figures/lot-state-words.ts';
+import { sheetQuotedAt } from './lot-words.ts';
 
 type LotPricePanelProps = { lot: LotAnswer; isSignedIn: boolean };
 

@@ -7,7 +7,7 @@ import type { RuleWindow } from '../../../components/figures/melt-rule-geometry.
 import { formatZone } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { useReader } from '../../../lib/reader-context.ts';
-import { shownPermille } from '../shown-figures.ts';
+import { shownPermille } from '../../../lib/shown-figures.ts';
 import { Closes, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
 
 export type RegisterListProps = { rows: RegisterRow[]; quotedAt: string | null; window: RuleWindow };

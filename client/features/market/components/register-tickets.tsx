@@ -7,7 +7,7 @@ import { DataList } from '../../../components/ui/data-list.tsx';
 import { formatDecimal, formatZone, THIN } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { useReader } from '../../../lib/reader-context.ts';
-import { shownPermille } from '../shown-figures.ts';
+import { shownPermille } from '../../../lib/shown-figures.ts';
 import { Closes, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
 import type { RegisterListProps } from './register-table.tsx';
 

@@ -7,7 +7,7 @@ import { Skeleton } from '../../../components/ui/skeleton.tsx';
 import { formatDate } from '../../../lib/format.ts';
 import { useReader } from '../../../lib/reader-context.ts';
 import { quoteHistoryQuery } from '../api/quote-history-query.ts';
-import { pricePerUnit } from '../shown-figures.ts';
+import { pricePerUnit } from '../../../lib/shown-figures.ts';
 import { QuoteHistoryChart } from './quote-history-chart.tsx';
 
 /** The last sixty days of one metal, as a line and as a table, in the reader's unit. */

@@ -9,7 +9,7 @@ import { FieldError } from '../../../components/ui/field.tsx';
 import { Checkbox } from '../../../components/ui/inputs.tsx';
 import { ApiProblem } from '../../../lib/api-client.ts';
 import { formatMoney } from '../../../lib/format.ts';
-import { useKeptState } from '../hooks/use-kept-state.ts';
+import { useKeptState } from '../../../lib/use-kept-state.ts';
 import {
   blankPurchase,
   fieldErrorsOf,

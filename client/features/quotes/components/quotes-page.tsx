@@ -13,7 +13,7 @@ import { Skeleton } from '../../../components/ui/skeleton.tsx';
 import { Age, Deadline, Time } from '../../../components/ui/time.tsx';
 import { quotesQuery } from '../../../lib/quotes.ts';
 import { useReader } from '../../../lib/reader-context.ts';
-import { pricePerUnit } from '../shown-figures.ts';
+import { pricePerUnit } from '../../../lib/shown-figures.ts';
 import { QuoteHistory } from './quote-history.tsx';
 
 /** What each metal is quoted at, since when and by whom, and how it got there. */

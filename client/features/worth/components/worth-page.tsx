@@ -10,7 +10,7 @@ import { ApiProblem } from '../../../lib/api-client.ts';
 import { quotesQuery } from '../../../lib/quotes.ts';
 import { useReader } from '../../../lib/reader-context.ts';
 import { valueMetal } from '../api/value-metal.ts';
-import { useKeptState } from '../hooks/use-kept-state.ts';
+import { useKeptState } from '../../../lib/use-kept-state.ts';
 import {
   blankRow,
   blankWorth,

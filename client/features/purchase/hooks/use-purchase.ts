@@ -2,7 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query';
 import type { PurchaseRequest } from '#shared/schemas/deals.ts';
 import { leaveTo } from '../../../lib/leave-to.ts';
 import { useAttemptKey } from '../../../lib/use-attempt-key.ts';
-import { lotQuery } from '../api/lot-query.ts';
+import { lotQuery } from '../../../lib/lot-query.ts';
 import { purchaseLot } from '../api/purchase-lot.ts';
 import { startPayment } from '../api/start-payment.ts';
 
