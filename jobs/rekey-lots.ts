@@ -1,7 +1,7 @@
 import { dayOf } from '#shared/calendar-day.ts';
 import { withTransaction } from '#server/database/transaction.ts';
 import { lotIdsThatDriftDaily } from '#server/features/lots/rank-lot.ts';
-import { rekeyLot } from '#server/features/lots/rekey-lot.ts';
+import { needsRekey, rekeyLot } from '#server/features/lots/rekey-lot.ts';
 import { dayRates } from '#server/features/quotes/quote-queries.ts';
 import { defineJob } from './run-job.ts';
 
@@ -23,6 +23,8 @@ export const rekeyLotsJob = defineJob({
       const ids = await lotIdsThatDriftDaily(afterId, BATCH);
       for (const lotId of ids) {
         try {
+          // Asked without the lock first: taking it writes the row, also where the keys stay.
+          if (!(await withTransaction({}, (unit) => needsRekey({ lotId, rates }, unit)))) continue;
           if (await withTransaction({ lots: [lotId] }, (unit) => rekeyLot({ lotId, rates }, unit)))
             changed += 1;
         } catch (error) {

@@ -1,14 +1,19 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { deskMembersAnswer, type DeskMemberAnswer } from '#shared/schemas/desk.ts';
-import { withTransaction } from '#server/database/transaction.ts';
+import type { RegisterAnswer } from '#shared/schemas/lots.ts';
+import { pinDatabaseTime, withTransaction } from '#server/database/transaction.ts';
+import { openLot } from '#server/features/lots/open-lot.ts';
+import { lapseDeal } from '#server/features/payments/lapse-deal.ts';
 import { setRole } from '#server/features/members/set-role.ts';
 import { AuditEntry } from '#server/models/audit-entry.ts';
 import { Certificate } from '#server/models/certificate.ts';
+import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
 import { OutboxMail } from '#server/models/outbox-mail.ts';
 import { SessionRow } from '#server/models/session-row.ts';
-import { buildDeal } from '#tests/factories/build-deal.ts';
+import { buildDeal, inDeal } from '#tests/factories/build-deal.ts';
+import { buildLot } from '#tests/factories/build-lot.ts';
 import { buildDeskCase } from '#tests/factories/build-desk-case.ts';
 import { buildMember, type BuiltMember } from '#tests/factories/build-member.ts';
 import { startTestApp, type Visitor } from '#tests/helpers/test-app.ts';
@@ -49,7 +54,67 @@ describe('suspending a member', () => {
     expect(refused.body.code).toBe('member-suspended');
     const [entry] = await AuditEntry.findAll({ where: { subjectId: member.id } });
     expect(entry).toMatchObject({ act: 'suspend-member', actorId: deskMember.id, actorRole: 'desk' });
-    expect(entry!.detail).toEqual({ reason, sessionsEnded: 2 });
+    expect(entry!.detail).toEqual({ reason, sessionsEnded: 2, lotsPaused: [] });
+  });
+
+  it('takes open lots off the register and out of reach; only their seller puts them back', async () => {
+    const seller = await buildMember({ canSell: true });
+    const lot = await buildLot({ state: 'open', sellerId: seller.id });
+    const paused = await buildLot({ state: 'paused', sellerId: seller.id });
+    const other = await buildLot({ state: 'open' });
+    const buyer = await app.signIn(await buildMember());
+    const listed = async () => {
+      const { body } = await buyer.get('/api/v1/lots?sort=newest&limit=50').expect(200);
+      return (body as RegisterAnswer).rows.map(({ code }) => code);
+    };
+    const stateOf = async (code: string) =>
+      (await Lot.findOne({ where: { code }, rejectOnEmpty: true })).state;
+    expect((await buyer.get(`/api/v1/lots/${lot.code}`).expect(200)).body.can.buy).toBe(true);
+    await suspend(seller.id).expect(200);
+    expect(await listed()).toContain(other.code);
+    expect(await listed()).not.toContain(lot.code);
+    await buyer.get(`/api/v1/lots/${lot.code}`).expect(404);
+    expect(await stateOf(paused.code)).toBe('paused');
+    const [entry] = await AuditEntry.findAll({ where: { subjectId: seller.id } });
+    expect(entry!.detail).toMatchObject({ lotsPaused: [lot.code] });
+    const seen = await desk.get(`/api/v1/lots/${lot.code}`).expect(200);
+    expect(seen.body).toMatchObject({ state: 'paused' });
+    expect(seen.body.history.at(-1)).toMatchObject({ act: 'paused', note: 'The account is suspended.' });
+    const visitor = await app.signIn(seller);
+    expect((await visitor.post(`/api/v1/lots/${lot.code}/reopen`).expect(403)).body.code).toBe(
+      'member-suspended',
+    );
+    await reinstate(seller.id).expect(200);
+    expect(await stateOf(lot.code)).toBe('paused');
+    await visitor.post(`/api/v1/lots/${lot.code}/reopen`).expect(200);
+    expect(await listed()).toContain(lot.code);
+    const history = (await buyer.get(`/api/v1/lots/${lot.code}`).expect(200)).body.history as {
+      note: unknown;
+    }[];
+    expect(history.filter(({ note }) => note !== null)).toEqual([]);
+  });
+
+  it('leaves a lot that an unpaid purchase gives back paused', async () => {
+    const deal = await buildDeal();
+    await suspend(deal.seller.id).expect(200);
+    const { fundBy } = await Deal.findByPk(deal.id, { rejectOnEmpty: true });
+    pinDatabaseTime(new Date(fundBy.getTime() + 1_000));
+    try {
+      await inDeal(deal, (unit) => lapseDeal({ dealId: deal.id }, unit));
+    } finally {
+      pinDatabaseTime(null);
+    }
+    expect((await Lot.findByPk(deal.lot.id, { rejectOnEmpty: true })).state).toBe('paused');
+  });
+
+  it('keeps the desk from opening a lot of a suspended seller', async () => {
+    const lot = await buildLot({ state: 'submitted' });
+    await suspend(lot.sellerId).expect(200);
+    const opened = withTransaction({ lots: [lot.id] }, async (unit) => {
+      const row = await Lot.findByPk(lot.id, { transaction: unit.tx, rejectOnEmpty: true });
+      return openLot({ lot: row, grade: 'certified' }, unit, deskMember);
+    });
+    await expect(opened).rejects.toMatchObject({ code: 'illegal-transition' });
   });
 
   it('is lifted again; a second time of either is refused', async () => {

@@ -102,11 +102,13 @@ describe('re-keying lots', () => {
     expect(await runJob(rekeyLotsJob)).toEqual({ changed: 1, failed: 0 });
     // 60 + 30 × 102.25 ÷ 4182.40 = 60.733430… g.
     expect(await find(mixed.id)).toMatchObject({ mainMetal: 'Au', rankPrice: '131.72317001' });
-    const after = await find(single.id);
+    const [rekeyed, after] = [await find(mixed.id), await find(single.id)];
+    expect(rekeyed.lockVersion).toBe(before.mixed.lockVersion + 1);
     expect([after.lockVersion, after.rankPrice]).toEqual([
       before.single.lockVersion,
       before.single.rankPrice,
     ]);
     expect(await runJob(rekeyLotsJob)).toEqual({ changed: 0, failed: 0 });
+    expect((await find(mixed.id)).lockVersion).toBe(rekeyed.lockVersion);
   });
 });

@@ -46,7 +46,7 @@ export const deskMemberRoutes: RouteDefinition[] = [
   defineRoute({
     method: 'post',
     path: '/api/v1/desk/members/:id/suspend',
-    summary: 'Suspend a member with a reason; all sessions end',
+    summary: 'Suspend a member with a reason; all sessions end and open lots are paused',
     access: 'desk',
     limit: 'write',
     params: idParam,

@@ -1,6 +1,7 @@
 import { ConflictError, ForbiddenError, NotFoundError } from '#server/app-error.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { recordAudit } from '#server/features/audit/record-audit.ts';
+import { pauseLotsOf } from '#server/features/lots/pause-lots-of.ts';
 import { Member } from '#server/models/member.ts';
 import { SessionRow } from '#server/models/session-row.ts';
 import type { Actor } from '#server/routing/define-route.ts';
@@ -16,9 +17,9 @@ async function findSubject(memberId: string, unit: Unit, actor: Actor): Promise<
 
 /**
  * Suspends a member: all sessions end at once, and from then on the account can look but not act. Deals that run are left
- * to their deadlines and to the desk.
+ * to their deadlines and to the desk; what he has on offer is paused.
  *
- * Caller holds the member. Throws `not-found`, `forbidden`, `illegal-transition` when suspended already.
+ * Caller holds the member; the member's open lots are locked here. Throws `not-found`, `forbidden`, `illegal-transition` when suspended already.
  */
 export async function suspendMember(
   { memberId, reason }: { memberId: string; reason: string },
@@ -30,13 +31,14 @@ export async function suspendMember(
     throw new ConflictError('illegal-transition', 'This account is suspended already.');
   await member.update({ suspendedAt: unit.now, suspensionReason: reason }, { transaction: unit.tx });
   const sessionsEnded = await SessionRow.destroy({ where: { memberId }, transaction: unit.tx });
+  const lotsPaused = await pauseLotsOf({ memberId }, unit, actor);
   await recordAudit(
     {
       actor,
       act: 'suspend-member',
       subjectKind: 'member',
       subjectId: memberId,
-      detail: { reason, sessionsEnded },
+      detail: { reason, sessionsEnded, lotsPaused },
     },
     unit,
   );
@@ -44,7 +46,7 @@ export async function suspendMember(
 }
 
 /**
- * Lifts a suspension; the reason stays in the audit trail.
+ * Lifts a suspension; the reason stays in the audit trail. Lots that were paused stay so until their seller reopens them.
  *
  * Caller holds the member. Throws `not-found`, `forbidden`, `illegal-transition` when not suspended.
  */

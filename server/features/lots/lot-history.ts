@@ -17,9 +17,10 @@ const PUBLIC_ACTS: ReadonlySet<string> = new Set([
   'reserved',
 ]);
 
-function noteOf(event: LotEvent): string | null {
+/** A reason is for the seller and the desk; that a price has changed is for all. */
+function noteOf(event: LotEvent, isInside: boolean): string | null {
   const detail = event.detail as { reason?: unknown; from?: unknown; to?: unknown } | null;
-  if (typeof detail?.reason === 'string') return detail.reason;
+  if (isInside && typeof detail?.reason === 'string') return detail.reason;
   if (event.act === 'price-changed' && typeof detail?.from === 'string' && typeof detail.to === 'string') {
     return `US$ ${detail.from} → US$ ${detail.to}`;
   }
@@ -33,6 +34,6 @@ export function presentHistory(events: readonly LotEvent[], isInside: boolean): 
       at: event.at.toISOString(),
       act: event.act,
       who: WHO[event.actorKind],
-      note: noteOf(event),
+      note: noteOf(event, isInside),
     }));
 }

@@ -30,7 +30,7 @@ export type LotRights = Record<
 const PULLABLE: readonly LotState[] = ['submitted', 'open', 'paused'];
 
 /** What a viewer may do with a lot as it stands; the commands ask the same questions again. */
-export function lotRights(viewer: Viewer, lot: LotRow): LotRights {
+export function lotRights(viewer: Viewer, lot: LotRow, isSellerSuspended: boolean): LotRights {
   const isOwn = isSeller(viewer, lot);
   const mayChange = isOwn && canDraftLots(viewer);
   const mayBuy = viewer !== null && viewer.role !== 'lab' && viewer.suspendedAt === null;
@@ -43,7 +43,7 @@ export function lotRights(viewer: Viewer, lot: LotRow): LotRights {
     pause: mayChange && lot.state === 'open',
     reopen: mayChange && lot.state === 'paused',
     copy: mayChange && lot.state !== 'draft',
-    buy: mayBuy && !isOwn && lot.state === 'open',
+    buy: mayBuy && !isOwn && lot.state === 'open' && !isSellerSuspended,
     pull: viewer !== null && isDeskStaff(viewer.role) && !isOwn && PULLABLE.includes(lot.state),
   };
 }

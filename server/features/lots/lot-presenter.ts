@@ -174,6 +174,6 @@ export function presentLot(
     history: presentHistory(detail.events, isInside),
     dealCode: deal === null || deal.liveLotId === null ? null : deal.code,
     draft: isOwn && (isDraft || lot.state === 'returned') ? lotDraft.parse(lot.draft) : null,
-    can: lotRights(viewer, lot),
+    can: lotRights(viewer, lot, detail.isSellerSuspended),
   };
 }

@@ -8,6 +8,7 @@ import { Lot } from '#server/models/lot.ts';
 import { LotAssay } from '#server/models/lot-assay.ts';
 import { LotEvent } from '#server/models/lot-event.ts';
 import { LotPhoto } from '#server/models/lot-photo.ts';
+import { Member } from '#server/models/member.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { canSeeLot } from './lot-policy.ts';
@@ -19,6 +20,7 @@ export type LotDetail = {
   certificate: Certificate | null;
   events: LotEvent[];
   completedDeals: number;
+  isSellerSuspended: boolean;
   /** The viewer's own deal over this lot, as its buyer or seller. */
   deal: Deal | null;
 };
@@ -76,7 +78,7 @@ async function findCertificate(lot: Lot): Promise<Certificate | null> {
 /** Everything that the page of a lot shows. Throws `not-found`. */
 export async function findLotDetail(code: string, viewer: Actor | null): Promise<LotDetail> {
   const { lot, deal } = await findVisibleLot({ code }, viewer);
-  const [assays, photos, certificate, events, completedDeals] = await Promise.all([
+  const [assays, photos, certificate, events, completedDeals, seller] = await Promise.all([
     LotAssay.findAll({
       where: { lotId: lot.id, assayVersion: lot.assayVersion },
       order: [['position', 'ASC']],
@@ -91,8 +93,10 @@ export async function findLotDetail(code: string, viewer: Actor | null): Promise
       ],
     }),
     countCompletedDeals(lot.sellerId),
+    Member.findByPk(lot.sellerId, { attributes: ['suspendedAt'] }),
   ]);
-  return { lot, assays, photos, certificate, events, completedDeals, deal };
+  const isSellerSuspended = seller?.suspendedAt != null;
+  return { lot, assays, photos, certificate, events, completedDeals, isSellerSuspended, deal };
 }
 
 /** First photo of each of several lots, by lot. */

@@ -6,6 +6,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import type { Lot } from '#server/models/lot.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { moveLot, recordLotEvent } from './move-lot.ts';
+import { isSellerSuspended } from './pause-lots-of.ts';
 import { rankColumnsOf } from './rank-lot.ts';
 
 export type OpenLotInput = {
@@ -26,7 +27,7 @@ function closingMoment(lot: Lot, now: Date): Date {
  * ranking keys at the day's rates, and dates are written with the change of state. Any other grade is written down and the
  * lot stays submitted, marked examined: it would settle on a final assay. Expects the lot's lock.
  *
- * Throws `illegal-transition`, `deadline-passed` when the seller's closing day is over, `no-fresh-quote`.
+ * Throws `illegal-transition`, also while the seller is suspended, `deadline-passed` when the seller's closing day is over, `no-fresh-quote`.
  */
 export async function openLot(
   { lot, grade, detail = {} }: OpenLotInput,
@@ -43,6 +44,9 @@ export async function openLot(
   const closesAt = closingMoment(lot, unit.now);
   if (closesAt <= unit.now) {
     throw new ConflictError('deadline-passed', 'The closing day is over; return the lot for another one.');
+  }
+  if (await isSellerSuspended(lot, unit)) {
+    throw new ConflictError('illegal-transition', 'The seller’s account is suspended; the lot cannot open.');
   }
   const ranks = await rankColumnsOf(lot, { grade, priceMinor: lot.priceMinor }, unit);
   const changes = { evidenceGrade: grade, ...ranks, openedAt: unit.now, closesAt, stateReason: null };
