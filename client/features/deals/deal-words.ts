@@ -58,11 +58,11 @@ export function parcelWord(status: string): string {
 
 type Payout = NonNullable<DealAnswer['payout']>;
 const payoutWords: Record<Payout['state'], string> = {
-  due: 'ordered; not transferred yet',
-  transferred: 'in the seller’s account at the payment provider; the payout to the bank follows',
-  sent: 'on its way to the seller’s bank',
-  paid: 'paid out to the seller’s bank',
-  failed: 'the payout came back; it is tried again once the bank details are right',
+  due: 'Ordered; not transferred yet',
+  transferred: 'In the seller’s account at the payment provider; the payout to the bank follows',
+  sent: 'On its way to the seller’s bank',
+  paid: 'Paid out to the seller’s bank',
+  failed: 'The payout came back; it is tried again once the bank details are right',
 };
 
 export function payoutWord(state: Payout['state']): string {
@@ -71,10 +71,10 @@ export function payoutWord(state: Payout['state']): string {
 
 type Refund = NonNullable<DealAnswer['refund']>;
 const refundWords: Record<Refund['state'], string> = {
-  due: 'ordered; not sent yet',
-  sent: 'on its way back to the buyer',
-  succeeded: 'back with the buyer',
-  failed: 'came back; it is tried again',
+  due: 'Ordered; not sent yet',
+  sent: 'On its way back to the buyer',
+  succeeded: 'Back with the buyer',
+  failed: 'Came back; it is tried again',
 };
 
 export function refundWord(state: Refund['state']): string {

@@ -17,6 +17,14 @@ function Thumb({ row }: { row: DealRow }) {
   return <SpecimenDrawing form={formOf(row.form)} label={null} className={`${box} p-1 text-ink-2`} />;
 }
 
+const whoNames: Record<NonNullable<DealRow['due']>['who'], string> = {
+  buyer: 'Buyer',
+  seller: 'Seller',
+  desk: 'Desk',
+  carrier: 'Carrier',
+  provider: 'Payment provider',
+};
+
 function DueLine({ row }: { row: DealRow }) {
   if (row.due === null)
     return (
@@ -28,7 +36,7 @@ function DueLine({ row }: { row: DealRow }) {
   return (
     <>
       <span className={row.isMyTurn ? 'font-medium' : ''}>
-        {!row.isMyTurn && `${who}: `}
+        {!row.isMyTurn && `${whoNames[who]}: `}
         {act}
         {at && (
           <>

@@ -29,12 +29,12 @@ export function DealOutcome({ deal }: { deal: DealAnswer }) {
           tone={payout.state === 'paid' ? 'good' : payout.state === 'failed' ? 'attention' : 'plain'}
           title={deal.side === 'buyer' ? 'Payout to the seller' : 'Payout'}
         >
+          {payoutWord(payout.state)}
           {deal.side !== 'buyer' && (
             <>
-              <Money value={payout.amount.amount} />:{' '}
+              : <Money value={payout.amount.amount} />
             </>
           )}
-          {payoutWord(payout.state)}
           {payout.paidAt && (
             <>
               , <Time at={payout.paidAt} />
@@ -48,7 +48,7 @@ export function DealOutcome({ deal }: { deal: DealAnswer }) {
           tone={refund.state === 'succeeded' ? 'good' : refund.state === 'failed' ? 'attention' : 'plain'}
           title="Refund"
         >
-          <Money value={refund.amount.amount} />: {refundWord(refund.state)}.
+          {refundWord(refund.state)}: <Money value={refund.amount.amount} />.
         </Notice>
       )}
     </>

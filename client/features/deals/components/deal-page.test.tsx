@@ -278,7 +278,7 @@ describe('the deal page', () => {
         refund: { state: 'succeeded', amount: held },
       }),
     );
-    expect(screen.getByText(/the payout came back/)).toHaveTextContent('account closed');
-    expect(screen.getByText(/back with the buyer/)).toHaveTextContent('4,121.35');
+    expect(screen.getByText(/The payout came back/)).toHaveTextContent('account closed');
+    expect(screen.getByText(/Back with the buyer/)).toHaveTextContent('4,121.35');
   });
 });

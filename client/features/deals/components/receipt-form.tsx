@@ -47,7 +47,8 @@ export function ReceiptForm({ deal, onClose }: ReceiptFormProps) {
     >
       <p className="max-w-prose text-ink-2">
         Weigh it before you clean, melt or sample it, and type every digit your balance shows: the last digit
-        says how finely it reads. The lot states{' '}
+        says how finely it reads. Buttons and powders can hold residual acid: keep them off skin and steel,
+        and check your local rules. The lot states{' '}
         <Mass entry={{ value: deal.lot.gross.value, unit: deal.lot.gross.unit as MassUnit }} others />
       </p>
       <div className="flex max-w-md flex-wrap items-start gap-3">

@@ -42,8 +42,8 @@ type LineProps = { row: RegisterRow; quotedAt: string | null };
 function Line({ row, quotedAt }: LineProps) {
   const { melt, percentOfMelt } = row;
   return (
-    <li className="grid gap-x-6 gap-y-2 border-b border-rule py-4 sm:grid-cols-2 lg:grid-cols-[minmax(0,7fr)_minmax(0,3fr)_minmax(0,4fr)_minmax(0,5fr)_minmax(0,3fr)]">
-      <div className="flex gap-4 sm:col-span-2 lg:col-span-1">
+    <li className="grid grid-cols-2 gap-x-6 gap-y-2 border-b border-rule py-4 lg:grid-cols-[minmax(0,7fr)_minmax(0,3fr)_minmax(0,4fr)_minmax(0,5fr)_minmax(0,3fr)]">
+      <div className="col-span-2 flex gap-4 lg:col-span-1">
         <Thumb row={row} />
         <div className="min-w-0">
           <Link
@@ -68,12 +68,14 @@ function Line({ row, quotedAt }: LineProps) {
           expanded={tidyPermille(row.uncertaintyPermille)}
         />
       </div>
-      <MeltRule
-        size="row"
-        band={melt && { low: melt.lowPercent, high: melt.highPercent }}
-        marks={percentOfMelt ? [{ kind: 'price', percent: percentOfMelt }] : []}
-        quote={melt && quotedAt ? { at: quotedAt } : null}
-      />
+      <div className="col-span-2 min-w-0 sm:col-span-1">
+        <MeltRule
+          size="row"
+          band={melt && { low: melt.lowPercent, high: melt.highPercent }}
+          marks={percentOfMelt ? [{ kind: 'price', percent: percentOfMelt }] : []}
+          quote={melt && quotedAt ? { at: quotedAt } : null}
+        />
+      </div>
       <div className="lg:text-right">
         <span className="block text-note text-ink-2">price</span>
         <Money value={row.price.amount} className="font-medium" />
