@@ -55,21 +55,22 @@ export function QuantityField(props: QuantityFieldProps) {
             value={value.value}
             onChange={(event) => onChange({ ...value, value: event.target.value })}
           />
-          <Select
-            id={fieldIdOf(`${pointer}/unit`)}
-            aria-label={unitLabel}
-            aria-invalid={unitError ? true : undefined}
-            value={value.unit}
-            onChange={(event) => onChange({ ...value, unit: event.target.value })}
-            className="w-28 shrink-0"
-          >
-            {!units.some((unit) => unit.value === value.unit) && <option value="">unit</option>}
-            {units.map((unit) => (
-              <option key={unit.value} value={unit.value}>
-                {unit.label}
-              </option>
-            ))}
-          </Select>
+          <span className="w-24 shrink-0">
+            <Select
+              id={fieldIdOf(`${pointer}/unit`)}
+              aria-label={unitLabel}
+              aria-invalid={unitError ? true : undefined}
+              value={value.unit}
+              onChange={(event) => onChange({ ...value, unit: event.target.value })}
+            >
+              {!units.some((unit) => unit.value === value.unit) && <option value="">unit</option>}
+              {units.map((unit) => (
+                <option key={unit.value} value={unit.value}>
+                  {unit.label}
+                </option>
+              ))}
+            </Select>
+          </span>
         </span>
       )}
     </Field>

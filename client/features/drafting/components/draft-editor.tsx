@@ -1,4 +1,4 @@
-import { useMemo, useRef, type FocusEvent, type ReactNode } from 'react';
+import { useCallback, useMemo, useRef, type FocusEvent, type ReactNode } from 'react';
 import type { LotAnswer, LotDraft } from '#shared/schemas/lots.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { Dialog } from '../../../components/ui/dialog.tsx';
@@ -42,8 +42,10 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
   const { draft, change, state, save } = saving;
   const problems = useDraftProblems(draft);
   const { errorAt, touch } = problems;
+  const { isDirty } = saving;
+  const isUnsaved = useCallback(() => !isGone.current && isDirty(), [isDirty]);
   const submission = useSubmission(lot.code, saving, problems, { canSell, onDone: onSubmitted });
-  const leave = useLeaveGuard(() => !isGone.current && saving.isDirty(), save);
+  const leave = useLeaveGuard(isUnsaved, save);
   const form = useMemo(
     () => ({ code: lot.code, draft, change, errorAt }),
     [lot.code, draft, change, errorAt],
@@ -60,7 +62,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
         <form
           noValidate
           aria-label="Lot"
-          className="min-w-0"
+          className="min-w-0 [&_:is(input,select,textarea,button,fieldset)]:scroll-mb-28"
           onBlur={(event: FocusEvent) => touch(event.target.id)}
           onSubmit={(event) => {
             event.preventDefault();

@@ -86,7 +86,7 @@ function FormCards() {
                 className="mt-0.5 size-5 shrink-0 accent-verdigris"
               />
               <span>
-                <span className="font-medium first-letter:uppercase">{formName(form)}</span>
+                <span className="inline-block font-medium first-letter:uppercase">{formName(form)}</span>
                 <span id={`${id}-${form}-note`} className="block text-note text-ink-2">
                   {meanings[form]}
                 </span>

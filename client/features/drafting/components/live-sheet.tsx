@@ -19,8 +19,9 @@ export function LiveSheet({ draft }: { draft: LotDraft }) {
     <section aria-labelledby="live-sheet" className="flex flex-col gap-5">
       <h2 id="live-sheet">What it comes to</h2>
       {quotes && <QuoteRemark quotes={quotes} sheet={sheet} />}
-      {sheet ? <Figures sheet={sheet} /> : <Waiting quotes={quotes} />}
+      {sheet ? <Rule sheet={sheet} /> : <Waiting quotes={quotes} />}
       {nets.length > 0 && <Nets nets={nets} />}
+      {sheet && <SettlementSheetView sheet={sheet} title="Your sheet" />}
     </section>
   );
 }
@@ -50,9 +51,10 @@ function QuoteRemark({ quotes, sheet }: { quotes: QuotesAnswer; sheet: Settlemen
 }
 
 function Waiting({ quotes }: { quotes: QuotesAnswer | undefined }) {
+  const at = quotes?.quotes.map((quote) => quote.at).sort()[0];
   return (
     <div className="sheet p-4 text-ink-2">
-      <MeltRule band={null} marks={[]} quote={null} />
+      {at !== undefined && <MeltRule band={null} marks={[]} quote={{ at }} />}
       <p className="mt-2">
         {quotes && quotes.quotes.length === 0
           ? 'As soon as there is a quote, the sheet stands here.'
@@ -69,19 +71,16 @@ function bandOf({ melt }: SettlementSheet) {
   return { low: percent(melt.low), high: percent(melt.high) };
 }
 
-function Figures({ sheet }: { sheet: SettlementSheet }) {
+function Rule({ sheet }: { sheet: SettlementSheet }) {
   const at = sheet.quotes.map((quote) => quote.at).sort()[0] ?? null;
   return (
-    <>
-      <div className="sheet p-4">
-        <MeltRule
-          band={bandOf(sheet)}
-          marks={sheet.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
-          quote={{ at }}
-        />
-      </div>
-      <SettlementSheetView sheet={sheet} title="Your sheet" />
-    </>
+    <div className="sheet p-4">
+      <MeltRule
+        band={bandOf(sheet)}
+        marks={sheet.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
+        quote={{ at }}
+      />
+    </div>
   );
 }
 

@@ -1,6 +1,6 @@
 import { useCallback, useDeferredValue, useMemo, useState } from 'react';
 import { checkLotDraft, type LotProblem } from '#shared/lot-submission.ts';
-import type { LotDraft } from '#shared/schemas/lots.ts';
+import { lotDraft, type LotDraft } from '#shared/schemas/lots.ts';
 import { useNow } from '../../../lib/use-now.ts';
 import { fieldIdOf, isBlank, valueAt } from '../../../components/lot-form/field-ids.ts';
 
@@ -38,11 +38,8 @@ export function useDraftProblems(draft: LotDraft) {
     return byField;
   }, [standing, attempt, touched, checked]);
   const items = told
-    .filter((problem) => standing.some((other) => isSame(problem, other)) || problem.pointer === '')
-    .map((problem) => ({
-      fieldId: problem.pointer === '' ? null : fieldIdOf(problem.pointer),
-      message: problem.message,
-    }));
+    .filter((problem) => !isOfDraft(problem) || standing.some((other) => isSame(problem, other)))
+    .map(({ pointer, message }) => ({ fieldId: pointer === '' ? null : fieldIdOf(pointer), message }));
   const touch = useCallback((id: string) => {
     setTouched((before) => (before.has(id) ? before : new Set(before).add(id)));
   }, []);
@@ -50,7 +47,7 @@ export function useDraftProblems(draft: LotDraft) {
   const refuse = (problems: LotProblem[], fromServer = false) => {
     if (fromServer)
       setFound(problems.map((problem) => ({ ...problem, valueThen: printed(draft, problem.pointer) })));
-    setTold(problems);
+    setTold(inFormOrder(problems));
     setAttempt((count) => count + 1);
   };
   const clear = () => {
@@ -71,6 +68,17 @@ export type DraftProblems = ReturnType<typeof useDraftProblems>;
 
 const isSame = (left: LotProblem, right: LotProblem) =>
   left.pointer === right.pointer && left.message === right.message;
+
+const LAST_PARTS = ['price', 'shipping', 'destinations', 'closesOn', 'confirmsCautions', 'confirmsTitle'];
+
+/** The check names terms before the certificate; the form asks for them after it. */
+function inFormOrder(problems: LotProblem[]): LotProblem[] {
+  const rank = ({ pointer }: LotProblem) => LAST_PARTS.indexOf(pointer.split('/')[1] ?? '');
+  return [...problems].sort((left, right) => rank(left) - rank(right));
+}
+
+/** What was refused for a reason outside the draft stays until the next try. */
+const isOfDraft = ({ pointer }: LotProblem) => (pointer.split('/')[1] ?? '') in lotDraft.shape;
 
 function isTouched(touched: ReadonlySet<string>, id: string): boolean {
   return touched.has(id) || [...touched].some((other) => other.startsWith(`${id}-`));

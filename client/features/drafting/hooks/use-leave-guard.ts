@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useState } from 'react';
+import { useCallback, useEffect, useRef, useState } from 'react';
 import { useBlocker } from 'react-router-dom';
 
 /**
@@ -13,18 +13,23 @@ export function useLeaveGuard(isDirty: () => boolean, save: () => Promise<boolea
       [isDirty],
     ),
   );
+  const held = useRef(blocker);
   useEffect(() => {
-    if (blocker.state !== 'blocked') return;
+    held.current = blocker;
+  });
+  const isHeld = blocker.state === 'blocked';
+  useEffect(() => {
+    if (!isHeld) return;
     let isCurrent = true;
     void save().then((isSaved) => {
       if (!isCurrent) return;
-      if (isSaved) blocker.proceed();
+      if (isSaved) held.current.proceed?.();
       else setIsAsking(true);
     });
     return () => {
       isCurrent = false;
     };
-  }, [blocker, save]);
+  }, [isHeld, save]);
   useEffect(() => {
     const warn = (event: BeforeUnloadEvent) => {
       if (isDirty()) event.preventDefault();

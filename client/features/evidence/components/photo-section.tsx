@@ -82,7 +82,7 @@ export function PhotoSection() {
 type UploadLineProps = { upload: PhotoUpload; onRetry: () => void; onForget: () => void };
 
 function UploadLine({ upload, onRetry, onForget }: UploadLineProps) {
-  const { file, preview, share, refusal } = upload;
+  const { file, preview, share, refusal, canRetry } = upload;
   return (
     <li className="flex gap-4">
       <img
@@ -101,9 +101,11 @@ function UploadLine({ upload, onRetry, onForget }: UploadLineProps) {
               </span>
             </FieldError>
             <div className="flex flex-wrap gap-x-3">
-              <Button look="quiet" className="min-h-8 py-1" onClick={onRetry}>
-                Send {file.name} again
-              </Button>
+              {canRetry && (
+                <Button look="quiet" className="min-h-8 py-1" onClick={onRetry}>
+                  Send {file.name} again
+                </Button>
+              )}
               <Button look="quiet" className="min-h-8 py-1" onClick={onForget}>
                 Leave {file.name} out
               </Button>

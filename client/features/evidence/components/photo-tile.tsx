@@ -43,20 +43,22 @@ export function PhotoTile({ photo, at, count, isBusy, onMove, onRemove, onCaptio
           <Button
             look="quiet"
             className={act}
+            aria-label={`Earlier: ${name}`}
             disabled={at === 0}
             busy={isBusy}
             onClick={() => onMove(at - 1)}
           >
-            Earlier<span className="sr-only">: {name}</span>
+            Earlier
           </Button>
           <Button
             look="quiet"
             className={act}
+            aria-label={`Later: ${name}`}
             disabled={at === count - 1}
             busy={isBusy}
             onClick={() => onMove(at + 1)}
           >
-            Later<span className="sr-only">: {name}</span>
+            Later
           </Button>
           <Button look="quiet" className={act} busy={isBusy} onClick={onRemove}>
             Remove<span className="sr-only"> {name}</span>

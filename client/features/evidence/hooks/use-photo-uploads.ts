@@ -2,7 +2,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import { PHOTO_BYTES_MAX, PHOTOS_MAX } from '#shared/limits.ts';
 import type { PhotoAnswer } from '#shared/schemas/lots.ts';
-import { newIdempotencyKey } from '../../../lib/api-client.ts';
+import { ApiProblem, newIdempotencyKey } from '../../../lib/api-client.ts';
 import { ownLotQuery } from '../../../lib/lots.ts';
 import { uploadPhoto } from '../api/photo-requests.ts';
 
@@ -13,6 +13,8 @@ export type PhotoUpload = {
   share: number;
   /** Why it was not taken; null while it waits or travels. */
   refusal: string | null;
+  /** True where nothing was wrong with the photo: no answer came. */
+  canRetry: boolean;
 };
 
 const TOO_LARGE = `The photo is too large: at most ${PHOTO_BYTES_MAX / (1024 * 1024)} MB each.`;
@@ -53,7 +55,9 @@ export function usePhotoUploads(code: string, kept: number) {
         forget(upload);
       } catch (error) {
         if (controller.signal.aborted) break;
-        change(upload.id, { refusal: error instanceof Error ? error.message : 'The photo was not taken.' });
+        const refusal = error instanceof Error ? error.message : 'The photo was not taken.';
+        const isRefused = error instanceof ApiProblem && error.status < 429;
+        change(upload.id, { refusal, canRetry: !isRefused });
       }
     }
     isRunning.current = false;
@@ -75,7 +79,7 @@ export function usePhotoUploads(code: string, kept: number) {
       previews.current.add(preview);
       const isOver = kept + waiting + at >= PHOTOS_MAX;
       const refusal = file.size > PHOTO_BYTES_MAX ? TOO_LARGE : isOver ? TOO_MANY : null;
-      return { id: newIdempotencyKey(), file, preview, share: 0, refusal };
+      return { id: newIdempotencyKey(), file, preview, share: 0, refusal, canRetry: false };
     });
     setUploads((before) => [...before, ...fresh]);
     queue.current.push(...fresh.filter((upload) => upload.refusal === null));
