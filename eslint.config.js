@@ -237,7 +237,7 @@ export default tseslint.config(
     },
   },
   {
-    files: ['server/bin/**/*.mjs', 'eslint.config.js', '.sequelizerc'],
+    files: ['server/bin/**/*.mjs', 'eslint.config.js'],
     languageOptions: { globals: globals.node },
     rules: { 'no-console': 'off' },
   },
