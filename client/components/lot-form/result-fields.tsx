@@ -31,7 +31,7 @@ const groups = [
 /** One metal of an assay or a report: which, how fine, how sure, by which method. */
 export function ResultFields({ pointer, elementKey, name, row, onChange }: ResultFieldsProps) {
   return (
-    <div className="grid items-start gap-x-5 gap-y-4 sm:grid-cols-2">
+    <div className="grid grid-cols-1 items-start gap-x-5 gap-y-4 sm:grid-cols-2">
       <ChoiceField
         pointer={`${pointer}/${elementKey}`}
         label="Metal"

@@ -58,7 +58,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
       <ErrorSummary items={problems.items} attempt={problems.attempt} />
       {!canSell && <PayoutsFirst id={fieldIdOf(PAYOUTS_FIRST.pointer)} />}
       <Conflict saving={saving} />
-      <div className="grid items-start gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,1fr)_25rem]">
+      <div className="grid grid-cols-1 items-start gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,1fr)_25rem]">
         <form
           noValidate
           aria-label="Lot"

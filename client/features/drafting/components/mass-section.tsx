@@ -15,7 +15,7 @@ export function MassSection() {
       title="Mass"
       sub="Weigh it clean and dry. Type every digit that the balance shows, zeros at the end too."
     >
-      <div className="grid items-start gap-6 sm:grid-cols-2">
+      <div className="grid grid-cols-1 items-start gap-6 sm:grid-cols-2">
         <QuantityField
           pointer="/gross"
           label="Gross mass"

@@ -18,7 +18,7 @@ export function TermsSection() {
       title="Price, parcel and time"
       sub="A fixed sum for the metal. It can change while the lot is open, never once a buyer has agreed."
     >
-      <div className="grid items-start gap-6 sm:grid-cols-2">
+      <div className="grid grid-cols-1 items-start gap-6 sm:grid-cols-2">
         <Field id={fieldIdOf('/price')} label="Price of the metal, US$" error={errorAt('/price')}>
           {(ties) => (
             <NumberInput

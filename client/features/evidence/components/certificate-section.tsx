@@ -33,7 +33,7 @@ export function CertificateSection() {
     >
       <CertificateFile />
       <LaboratoryFields report={report} onChange={put} />
-      <div className="grid items-start gap-x-5 gap-y-6 sm:grid-cols-3">
+      <div className="grid grid-cols-1 items-start gap-x-5 gap-y-6 sm:grid-cols-3">
         <TextField pointer="/certificate/issuedOn" label="Issued on" type="date" />
         <TextField pointer="/certificate/receivedOn" label="Piece received on" type="date" optional />
         <TextField pointer="/certificate/testedOn" label="Tested on" type="date" optional />
@@ -71,7 +71,7 @@ function PieceFields({ report, onChange }: PieceFieldsProps) {
         optional
         maxLength={200}
       />
-      <div className="grid items-start gap-x-5 gap-y-6 sm:grid-cols-2">
+      <div className="grid grid-cols-1 items-start gap-x-5 gap-y-6 sm:grid-cols-2">
         <div>
           <QuantityField
             pointer="/certificate/itemMass"

@@ -16,7 +16,7 @@ export function LaboratoryFields({ report, onChange }: LaboratoryFieldsProps) {
   const laboratories = data?.laboratories ?? [];
   const chosen = laboratories.find((laboratory) => laboratory.id === report.laboratoryId);
   return (
-    <div className="grid items-start gap-x-5 gap-y-6 sm:grid-cols-2">
+    <div className="grid grid-cols-1 items-start gap-x-5 gap-y-6 sm:grid-cols-2">
       <ChoiceField
         pointer="/certificate/laboratory"
         label="Laboratory"

@@ -60,7 +60,7 @@ export function PhotoSection() {
       )}
       {changes.isError && <FieldError id="lot-photos-change-error">{changes.error.message}</FieldError>}
       {photos.length > 0 && (
-        <ol aria-label="Photos of the lot" className="grid gap-4 sm:grid-cols-2">
+        <ol aria-label="Photos of the lot" className="grid grid-cols-1 gap-4 sm:grid-cols-2">
           {photos.map((photo, at) => (
             <PhotoTile
               key={photo.id}
@@ -88,6 +88,7 @@ function UploadLine({ upload, onRetry, onForget }: UploadLineProps) {
       <img
         src={preview}
         alt=""
+        onError={(event) => (event.currentTarget.hidden = true)}
         className="size-14 shrink-0 rounded-box border border-rule bg-sheet object-cover"
       />
       <div className="min-w-0 grow">

@@ -12,7 +12,7 @@ export function LotHistory({ history }: { history: LotAnswer['history'] }) {
         {history.map((event) => (
           <li
             key={`${event.at} ${event.act}`}
-            className="grid gap-x-5 border-t border-rule py-2 sm:grid-cols-[11.5rem_minmax(0,1fr)_7rem]"
+            className="grid grid-cols-1 gap-x-5 border-t border-rule py-2 sm:grid-cols-[11.5rem_minmax(0,1fr)_7rem]"
           >
             <span className="fig text-note text-ink-2">
               <Time at={event.at} />

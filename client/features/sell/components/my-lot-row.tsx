@@ -25,7 +25,7 @@ export function MyLotRow({ lot }: { lot: MyLot }) {
       <div className="sheet size-16 shrink-0 overflow-hidden">
         <Thumb lot={lot} />
       </div>
-      <div className="grid min-w-0 grow gap-x-6 gap-y-2 md:grid-cols-[minmax(0,1.1fr)_minmax(0,1.5fr)_9rem]">
+      <div className="grid grid-cols-1 min-w-0 grow gap-x-6 gap-y-2 md:grid-cols-[minmax(0,1.1fr)_minmax(0,1.5fr)_9rem]">
         <div className="min-w-0">
           <Link to={paths.draft(lot.code)} className="font-semibold hover:underline">
             {lot.title.trim() === '' ? 'Untitled draft' : lot.title}

@@ -55,7 +55,7 @@ export function OwnLotPage({ lot, onRedrafted }: OwnLotPageProps) {
         <span className="text-ink-2">{next}</span>
       </div>
       <LotActs lot={lot} onRedrafted={onRedrafted} />
-      <div className="grid items-start gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,1fr)_27rem]">
+      <div className="grid grid-cols-1 items-start gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,1fr)_27rem]">
         <div className="flex min-w-0 flex-col gap-8">
           <LotFacts lot={lot} />
           <LotHistory history={lot.history} />
