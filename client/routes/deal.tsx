@@ -1,5 +1,6 @@
 import { redirect, useParams, type LoaderFunctionArgs } from 'react-router-dom';
-import { dealQuery } from '../features/deals/api/deal-query.ts';
+import { dealQuery } from '../lib/deals.ts';
+import { DealRegister } from '../features/deal-acts/components/deal-register.tsx';
 import { DealPage } from '../features/deals/components/deal-page.tsx';
 import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';
@@ -15,5 +16,5 @@ export async function loader({ params, request }: LoaderFunctionArgs) {
 
 export function Component() {
   const { code = '' } = useParams();
-  return <DealPage key={code} code={code} />;
+  return <DealPage key={code} code={code} Register={DealRegister} />;
 }

@@ -1,5 +1,5 @@
 import { isRouted } from '../app/routes.tsx';
-import { dealsQuery } from '../features/deals/api/deals-query.ts';
+import { dealsQuery } from '../lib/deals.ts';
 import { DealsPage } from '../features/deals/components/deals-page.tsx';
 import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';

@@ -1,6 +1,6 @@
 import { useParams, useSearchParams, type LoaderFunctionArgs } from 'react-router-dom';
-import { dealQuery } from '../features/deals/api/deal-query.ts';
-import { PaymentPage } from '../features/deals/components/payment-page.tsx';
+import { dealQuery } from '../lib/deals.ts';
+import { PaymentPage } from '../features/deal-acts/components/payment-page.tsx';
 import { queryClient } from '../lib/query-client.ts';
 
 export async function loader({ params }: LoaderFunctionArgs): Promise<null> {

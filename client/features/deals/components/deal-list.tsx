@@ -5,7 +5,7 @@ import { Money } from '../../../components/figures/money.tsx';
 import { SpecimenDrawing } from '../../../components/figures/specimen-drawing.tsx';
 import { Deadline, Time } from '../../../components/ui/time.tsx';
 import { paths } from '../../../lib/paths.ts';
-import { stateWord } from '../deal-words.ts';
+import { stateWord } from '../../../components/figures/deal-words.ts';
 
 function formOf(form: string): LotForm {
   return lotForms.find((known) => known === form) ?? 'button';

@@ -2,7 +2,7 @@ import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { Money } from '../../../components/figures/money.tsx';
 import { Notice } from '../../../components/ui/notice.tsx';
 import { Time } from '../../../components/ui/time.tsx';
-import { contestReasons, payoutWord, refundWord } from '../deal-words.ts';
+import { contestReasons, payoutWord, refundWord } from '../../../components/figures/deal-words.ts';
 
 /** What became of the money, and what stands against the deal, in words. */
 export function DealOutcome({ deal }: { deal: DealAnswer }) {

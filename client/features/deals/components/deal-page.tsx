@@ -1,4 +1,5 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
+import type { ComponentType } from 'react';
 import { Link } from 'react-router-dom';
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { Notice } from '../../../components/ui/notice.tsx';
@@ -7,12 +8,11 @@ import { Page } from '../../../components/ui/page.tsx';
 import { Stamp } from '../../../components/ui/stamp.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { paths } from '../../../lib/paths.ts';
-import { dealQuery } from '../api/deal-query.ts';
-import { counterpartyText, stateWord } from '../deal-words.ts';
+import { dealQuery } from '../../../lib/deals.ts';
+import { counterpartyText, stateWord } from '../../../components/figures/deal-words.ts';
 import { DealOutcome } from './deal-outcome.tsx';
 import { DealPapers } from './deal-papers.tsx';
 import { DealParcel } from './deal-parcel.tsx';
-import { DealRegister } from './deal-register.tsx';
 import { DealSums } from './deal-sums.tsx';
 
 const roles = { buyer: 'You buy from', seller: 'You sell to', desk: 'For the desk; the buyer is' } as const;
@@ -32,8 +32,14 @@ function DealSub({ deal }: { deal: DealAnswer }) {
   );
 }
 
+type DealPageProps = {
+  code: string;
+  /** The book of the deal with the acts that are open to the reader. */
+  Register: ComponentType<{ deal: DealAnswer }>;
+};
+
 /** One deal from agreement to payout: its book, its money, its parcel, its papers. */
-export function DealPage({ code }: { code: string }) {
+export function DealPage({ code, Register }: DealPageProps) {
   const { data: deal, isError } = useSuspenseQuery(dealQuery(code));
   return (
     <Page
@@ -55,7 +61,7 @@ export function DealPage({ code }: { code: string }) {
         </Notice>
       )}
       <div className="grid gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,5fr)_minmax(0,3fr)]">
-        <DealRegister deal={deal} />
+        <Register deal={deal} />
         <div className="flex min-w-0 flex-col gap-6">
           <DealOutcome deal={deal} />
           <DealSums deal={deal} />

@@ -6,7 +6,7 @@ import { Quantity } from '../../../components/figures/quantity.tsx';
 import { DataList } from '../../../components/ui/data-list.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { countryName } from '../../../lib/countries.ts';
-import { isNothing, parcelWord } from '../deal-words.ts';
+import { isNothing, parcelWord } from '../../../components/figures/deal-words.ts';
 
 type Part<K extends 'parcel' | 'receipt' | 'delivery'> = NonNullable<DealAnswer[K]>;
 

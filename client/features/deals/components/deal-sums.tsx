@@ -1,7 +1,7 @@
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { Money } from '../../../components/figures/money.tsx';
 import { formatPercent } from '../../../lib/format.ts';
-import { isNothing } from '../deal-words.ts';
+import { isNothing } from '../../../components/figures/deal-words.ts';
 
 type Line = { term: string; amount: string; isTotal?: boolean };
 

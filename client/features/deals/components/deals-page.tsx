@@ -6,7 +6,7 @@ import { EmptyState } from '../../../components/ui/empty-state.tsx';
 import { OfflineNotice } from '../../../components/ui/offline-notice.tsx';
 import { Page } from '../../../components/ui/page.tsx';
 import { paths } from '../../../lib/paths.ts';
-import { dealsQuery } from '../api/deals-query.ts';
+import { dealsQuery } from '../../../lib/deals.ts';
 import { DealList } from './deal-list.tsx';
 
 type PartProps = { id: string; title: string; rows: DealRow[]; empty: string };

@@ -2,8 +2,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useCallback } from 'react';
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { confirmDone } from '../../../components/ui/toast-store.ts';
-import { dealQuery } from '../api/deal-query.ts';
-import { dealsQuery } from '../api/deals-query.ts';
+import { dealQuery, dealsQuery } from '../../../lib/deals.ts';
 
 /** The place on the page that takes the focus when a panel has done its work and is gone. */
 export const REGISTER_ID = 'deal-register';

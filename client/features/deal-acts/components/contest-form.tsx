@@ -5,7 +5,7 @@ import { RadioGroup, Textarea } from '../../../components/ui/inputs.tsx';
 import { formatMoney } from '../../../lib/format.ts';
 import { readBy, useForm } from '../../../lib/use-form.ts';
 import { sendAct } from '../api/send-act.ts';
-import { contestReasons, counterpartyText } from '../deal-words.ts';
+import { contestReasons, counterpartyText } from '../../../components/figures/deal-words.ts';
 import { useDealChanged, useDealReload } from '../hooks/use-deal-changed.ts';
 import { ActPanel } from './act-panel.tsx';
 

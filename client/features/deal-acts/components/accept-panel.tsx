@@ -6,7 +6,7 @@ import { formatMoney } from '../../../lib/format.ts';
 import { useAttemptKey } from '../../../lib/use-attempt-key.ts';
 import { acceptDeal } from '../api/accept-deal.ts';
 import { actText } from '../deal-acts.ts';
-import { counterpartyText } from '../deal-words.ts';
+import { counterpartyText } from '../../../components/figures/deal-words.ts';
 import { useDealChanged, useDealReload } from '../hooks/use-deal-changed.ts';
 
 type PanelProps = { deal: DealAnswer; onClose: () => void };

@@ -3,7 +3,7 @@ import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { RegisterOfDeal, type DueNext } from '../../../components/figures/register-of-deal.tsx';
 import { Button } from '../../../components/ui/button.tsx';
 import { actText, openActs, type DealAct } from '../deal-acts.ts';
-import { isNothing, whoWord } from '../deal-words.ts';
+import { isNothing, whoWord } from '../../../components/figures/deal-words.ts';
 import { REGISTER_ID } from '../hooks/use-deal-changed.ts';
 import { OpenAct } from './act-panels.tsx';
 

@@ -4,7 +4,7 @@ import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { ConfirmPanel } from '../../../components/ui/confirm-panel.tsx';
 import { sendAct, sendDeskAct } from '../api/send-act.ts';
 import { actText } from '../deal-acts.ts';
-import { counterpartyText } from '../deal-words.ts';
+import { counterpartyText } from '../../../components/figures/deal-words.ts';
 import { useDealChanged, useDealReload } from '../hooks/use-deal-changed.ts';
 
 type PanelProps = { deal: DealAnswer; onClose: () => void };

@@ -1,7 +1,7 @@
 import type { z } from 'zod';
 import type { refreshPaymentAnswer } from '#shared/schemas/deals.ts';
 import { apiSend } from '../../../lib/api-client.ts';
-import { dealUrl } from './deal-query.ts';
+import { dealUrl } from '../../../lib/deals.ts';
 
 export type PaymentStanding = z.infer<typeof refreshPaymentAnswer>;
 

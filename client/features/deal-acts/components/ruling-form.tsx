@@ -6,7 +6,7 @@ import { formatMoney } from '../../../lib/format.ts';
 import { useAttemptKey } from '../../../lib/use-attempt-key.ts';
 import { readBy, useForm } from '../../../lib/use-form.ts';
 import { ruleDeal } from '../api/rule-deal.ts';
-import { counterpartyText } from '../deal-words.ts';
+import { counterpartyText } from '../../../components/figures/deal-words.ts';
 import { useDealChanged, useDealReload } from '../hooks/use-deal-changed.ts';
 import { ActPanel } from './act-panel.tsx';
 

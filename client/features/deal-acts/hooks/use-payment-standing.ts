@@ -1,7 +1,6 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
-import { dealQuery } from '../api/deal-query.ts';
-import { dealsQuery } from '../api/deals-query.ts';
+import { dealQuery, dealsQuery } from '../../../lib/deals.ts';
 import { refreshPayment, type PaymentStanding } from '../api/refresh-payment.ts';
 
 const ASK_EVERY_MS = 3_000;

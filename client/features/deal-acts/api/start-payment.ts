@@ -1,5 +1,5 @@
 import { apiSend } from '../../../lib/api-client.ts';
-import { dealUrl } from './deal-query.ts';
+import { dealUrl } from '../../../lib/deals.ts';
 
 /** Opens, or finds again, the hosted page on which the deal is paid. */
 export function startPayment(

@@ -8,9 +8,9 @@ import { Page } from '../../../components/ui/page.tsx';
 import { Deadline } from '../../../components/ui/time.tsx';
 import { formatMoney } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
-import { dealQuery } from '../api/deal-query.ts';
+import { dealQuery } from '../../../lib/deals.ts';
 import { actText } from '../deal-acts.ts';
-import { stateWord } from '../deal-words.ts';
+import { stateWord } from '../../../components/figures/deal-words.ts';
 import { usePay } from '../hooks/use-pay.ts';
 import { usePaymentStanding } from '../hooks/use-payment-standing.ts';
 

@@ -2,7 +2,7 @@ import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { ConfirmPanel } from '../../../components/ui/confirm-panel.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { actText } from '../deal-acts.ts';
-import { counterpartyText } from '../deal-words.ts';
+import { counterpartyText } from '../../../components/figures/deal-words.ts';
 import { usePay } from '../hooks/use-pay.ts';
 
 type PanelProps = { deal: DealAnswer; onClose: () => void };

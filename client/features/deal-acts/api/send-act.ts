@@ -1,6 +1,6 @@
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { apiSend } from '../../../lib/api-client.ts';
-import { dealUrl } from './deal-query.ts';
+import { dealUrl } from '../../../lib/deals.ts';
 
 type SideAct = 'ship' | 'confirm-delivery' | 'receipt' | 'contest';
 type DeskAct = 'freeze' | 'unfreeze';
