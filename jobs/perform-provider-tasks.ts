@@ -1,6 +1,6 @@
 import { registerParcelTask } from '#server/features/parcels/register-parcel.ts';
 import { PAYMENT_TASK_HANDLERS } from '#server/features/payments/payment-task-handlers.ts';
-import type { ProviderTaskHandlers } from '#server/features/payments/provider-task-handler.ts';
+import type { ProviderTaskHandlers } from '#server/features/provider-tasks/provider-task-handler.ts';
 import { defineJob } from './run-job.ts';
 import { runProviderTasks } from './run-provider-tasks.ts';
 

@@ -1,7 +1,7 @@
 import { dayOf } from '#shared/calendar-day.ts';
 import { withTransaction } from '#server/database/transaction.ts';
-import { lotIdsThatDriftDaily } from '#server/features/lots/rank-lot.ts';
-import { needsRekey, rekeyLot } from '#server/features/lots/rekey-lot.ts';
+import { lotIdsThatDriftDaily } from '#server/features/register/rank-lot.ts';
+import { needsRekey, rekeyLot } from '#server/features/register/rekey-lot.ts';
 import { dayRates } from '#server/features/quotes/quote-queries.ts';
 import { defineJob } from './run-job.ts';
 

@@ -5,13 +5,13 @@ import {
   claimableTaskIds,
   claimProviderTask,
   holdsLease,
-} from '#server/features/payments/claim-provider-task.ts';
+} from '#server/features/provider-tasks/claim-provider-task.ts';
 import { findDealLocks } from '#server/features/payments/deal-locks.ts';
-import { endProviderTask, failProviderTask } from '#server/features/payments/end-provider-task.ts';
+import { endProviderTask, failProviderTask } from '#server/features/provider-tasks/end-provider-task.ts';
 import type {
   ProviderTaskHandler,
   ProviderTaskHandlers,
-} from '#server/features/payments/provider-task-handler.ts';
+} from '#server/features/provider-tasks/provider-task-handler.ts';
 import { needsNewKey, PaymentProviderError } from '#server/integrations/payment-errors.ts';
 import { logger } from '#server/logger.ts';
 import type { ProviderTask } from '#server/models/provider-task.ts';

@@ -1,4 +1,4 @@
-import { findDifferingSheets } from '#server/features/deals/find-differing-sheets.ts';
+import { findDifferingSheets } from '#server/features/sheets/find-differing-sheets.ts';
 import type { Check } from './check.ts';
 
 export const sheetRecomputesCheck: Check = {

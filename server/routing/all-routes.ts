@@ -8,7 +8,8 @@ import { quoteRoutes } from '#server/features/quotes/quote-routes.ts';
 import { sessionRoutes } from '#server/features/members/session-routes.ts';
 import { onboardingRoutes } from '#server/features/onboarding/onboarding-routes.ts';
 import { paymentRoutes } from '#server/features/payments/payment-routes.ts';
-import { webhookRoutes } from '#server/features/payments/webhook-routes.ts';
+import { webhookRoutes } from '#server/features/provider-events/webhook-routes.ts';
+import { feeRoutes } from '#server/features/fees/fee-routes.ts';
 import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
 import { lotRoutes } from '#server/features/lots/lot-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
@@ -30,6 +31,7 @@ const productRoutes: readonly RouteDefinition[] = [
   ...paymentRoutes,
   ...webhookRoutes,
   ...registerRoutes,
+  ...feeRoutes,
   ...lotRoutes,
   ...photoRoutes,
   ...documentRoutes,

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { canDealBecome, DEAL_STATES, isDealEnded, type DealState } from '#shared/deal-states.ts';
 import { sequelize } from '#server/database/connection.ts';
-import { findDifferingSheets } from '#server/features/deals/find-differing-sheets.ts';
+import { findDifferingSheets } from '#server/features/sheets/find-differing-sheets.ts';
 import { moveDeal, recordDealEvent } from '#server/features/deals/move-deal.ts';
 import { Deal, DealEvent, DealSheet } from '#server/models/index.ts';
 import { buildDeal, inDeal, type BuiltDeal } from '#tests/factories/build-deal.ts';

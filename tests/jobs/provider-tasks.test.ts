@@ -9,8 +9,8 @@ import {
   TASK_LEASE_SECONDS,
   claimProviderTask,
   holdsLease,
-} from '#server/features/payments/claim-provider-task.ts';
-import { TASK_TRIES_MAX, backoffSeconds } from '#server/features/payments/end-provider-task.ts';
+} from '#server/features/provider-tasks/claim-provider-task.ts';
+import { TASK_TRIES_MAX, backoffSeconds } from '#server/features/provider-tasks/end-provider-task.ts';
 import { PAYMENT_TASK_HANDLERS } from '#server/features/payments/payment-task-handlers.ts';
 import { AuditEntry } from '#server/models/audit-entry.ts';
 import { Deal } from '#server/models/deal.ts';

@@ -15,7 +15,7 @@ import {
 import { newCode, newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { openDealAccounts } from '#server/features/ledger/open-accounts.ts';
-import { currentFees } from '#server/features/lots/fee-queries.ts';
+import { currentFees } from '#server/features/fees/fee-queries.ts';
 import { moveLot } from '#server/features/lots/move-lot.ts';
 import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import { Deal } from '#server/models/deal.ts';

@@ -5,7 +5,7 @@ import type { ShipRequest } from '#shared/schemas/deals.ts';
 import { ConflictError, InvalidError } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
-import { enqueueProviderTask } from '#server/features/payments/enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { Parcel } from '#server/models/parcel.ts';
 import type { Actor } from '#server/routing/define-route.ts';

@@ -1,7 +1,7 @@
 import { lotDraft } from '#shared/schemas/lots.ts';
 import { ConflictError } from '#server/app-error.ts';
 import type { Unit } from '#server/database/transaction.ts';
-import { documentKey, dropUnusedDocuments } from '#server/features/lots/certificate-files.ts';
+import { documentKey, dropUnusedDocuments } from './certificate-files.ts';
 import { readOwnLot } from '#server/features/lots/own-lot.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';

@@ -4,7 +4,7 @@ import { DOCUMENT_BYTES_MAX } from '#shared/limits.ts';
 import { AppError } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import { withTransaction } from '#server/database/transaction.ts';
-import { documentKey } from '#server/features/lots/certificate-files.ts';
+import { documentKey } from './certificate-files.ts';
 import { removeFiles } from '#server/features/photos/remove-files.ts';
 import { storage } from '#server/integrations/storage.ts';
 import type { ReceivedFile } from '#server/middleware/receive-file.ts';

@@ -2,7 +2,7 @@ import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { databaseNow } from '#server/database/transaction.ts';
 import { newestQuotes } from '#server/features/quotes/quote-queries.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { currentFees } from './fee-queries.ts';
+import { currentFees } from '#server/features/fees/fee-queries.ts';
 import { presentLot } from './lot-presenter.ts';
 import { findLotDetail } from './lot-queries.ts';
 

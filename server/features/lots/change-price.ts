@@ -7,7 +7,7 @@ import { orRefuse } from '#server/refused.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { recordLotEvent } from './move-lot.ts';
 import { readOwnLot } from './own-lot.ts';
-import { rankColumnsOf } from './rank-lot.ts';
+import { rankColumnsOf } from '#server/features/register/rank-lot.ts';
 
 /**
  * Changes the price of an open lot and its ranking key with it; never of a reserved one, whose buyer has agreed. The same

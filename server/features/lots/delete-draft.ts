@@ -3,7 +3,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import { LotPhoto } from '#server/models/lot-photo.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { dropUnusedDocuments } from './certificate-files.ts';
+import { dropUnusedDocuments } from '#server/features/lot-documents/certificate-files.ts';
 import { canDeleteDraft } from './lot-policy.ts';
 import { readOwnLot } from './own-lot.ts';
 

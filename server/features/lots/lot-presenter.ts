@@ -13,7 +13,7 @@ import { moneyAnswer } from '#server/money-answer.ts';
 import type { LotAssay } from '#server/models/lot-assay.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { presentCertificate } from './certificate-presenter.ts';
-import type { CurrentFee } from './fee-queries.ts';
+import type { CurrentFee } from '#server/features/fees/fee-queries.ts';
 import { lotEntryOf, lotSheetInput } from './lot-entry.ts';
 import { presentHistory } from './lot-history.ts';
 import { isSeller, lotRights } from './lot-policy.ts';

@@ -1,8 +1,6 @@
 import { z } from 'zod';
-import { minorToAmount } from '#shared/money.ts';
 import { lotCode } from '#shared/schemas/common.ts';
 import {
-  feeScheduleAnswer,
   lotAnswer,
   lotParams,
   myLotsAnswer,
@@ -10,7 +8,7 @@ import {
   reasonRequest,
   saveDraftRequest,
 } from '#shared/schemas/lots.ts';
-import { databaseNow, withTransaction, type Unit } from '#server/database/transaction.ts';
+import { withTransaction, type Unit } from '#server/database/transaction.ts';
 import { removeFiles } from '#server/features/photos/remove-files.ts';
 import {
   defineRoute,
@@ -22,14 +20,13 @@ import { answerLot } from './answer-lot.ts';
 import { changePrice } from './change-price.ts';
 import { createDraft } from './create-draft.ts';
 import { deleteDraft } from './delete-draft.ts';
-import { currentFees } from './fee-queries.ts';
 import { findMyLots } from './my-lots.ts';
 import { lotIdOf } from './own-lot.ts';
 import { pauseLot } from './pause-lot.ts';
-import { redraftLot } from './redraft-lot.ts';
+import { redraftLot } from '#server/features/drafting/redraft-lot.ts';
 import { reopenLot } from './reopen-lot.ts';
-import { saveDraft } from './save-draft.ts';
-import { submitLot } from './submit-lot.ts';
+import { saveDraft } from '#server/features/drafting/save-draft.ts';
+import { submitLot } from '#server/features/drafting/submit-lot.ts';
 import { withdrawLot } from './withdraw-lot.ts';
 
 type Code = z.infer<typeof lotParams>;
@@ -73,25 +70,6 @@ const readRoutes: RouteDefinition[] = [
     answer: myLotsAnswer,
     handle: async ({ res, actor }) => {
       res.json(await findMyLots(actor));
-    },
-  }),
-  defineRoute({
-    method: 'get',
-    path: '/api/v1/fee-schedule',
-    summary: 'The commission of each payment method that is valid now',
-    access: 'public',
-    limit: 'read',
-    answer: feeScheduleAnswer,
-    handle: async ({ res }) => {
-      const fees = await currentFees(await databaseNow());
-      res.json({
-        rates: fees.map((fee) => ({
-          method: fee.method,
-          percent: fee.percent,
-          minimum: { currency: 'USD', amount: minorToAmount(fee.minimumMinor) },
-          validFrom: fee.validFrom.toISOString(),
-        })),
-      });
     },
   }),
   defineRoute({

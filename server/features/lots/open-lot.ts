@@ -7,7 +7,7 @@ import type { Lot } from '#server/models/lot.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { moveLot, recordLotEvent } from './move-lot.ts';
 import { isSellerSuspended } from './pause-lots-of.ts';
-import { rankColumnsOf } from './rank-lot.ts';
+import { rankColumnsOf } from '#server/features/register/rank-lot.ts';
 
 export type OpenLotInput = {
   /** Read under its lock. */

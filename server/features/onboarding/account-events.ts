@@ -1,4 +1,4 @@
-import type { ProviderEventReader } from '#server/features/payments/provider-event-reader.ts';
+import type { ProviderEventReader } from '#server/features/provider-events/provider-event-reader.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
 import { locksOfAccount } from './account-locks.ts';
 import { applyAccount } from './apply-account.ts';

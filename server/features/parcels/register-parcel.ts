@@ -1,5 +1,5 @@
 import { invariant } from '#server/app-error.ts';
-import { defineProviderTask } from '#server/features/payments/provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 import { carrierClient } from '#server/integrations/clients.ts';
 import type { ParcelTracker } from '#server/integrations/carrier.ts';
 import { Deal } from '#server/models/deal.ts';

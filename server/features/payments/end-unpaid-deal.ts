@@ -2,7 +2,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Payment } from '#server/models/payment.ts';
 import { invariant } from '#server/app-error.ts';
-import { enqueueProviderTask } from './enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 import { lapseDeal } from './lapse-deal.ts';
 
 /**

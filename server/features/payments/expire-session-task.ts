@@ -8,7 +8,7 @@ import { applyCheckout, closePayment } from './apply-checkout.ts';
 import { checkoutOrder } from './checkout-order.ts';
 import { lapseDeal } from './lapse-deal.ts';
 import { paidCheckout } from './paid-checkout.ts';
-import { defineProviderTask } from './provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 
 /**
  * The answer that would have told us the session may have been lost: asked again under its key, the provider gives it. When

@@ -7,7 +7,7 @@ import { Refund } from '#server/models/refund.ts';
 import { applyCheckout } from './apply-checkout.ts';
 import { applyRefund } from './apply-refund.ts';
 import { findDealLocks } from './deal-locks.ts';
-import type { ProviderEventReader } from './provider-event-reader.ts';
+import type { ProviderEventReader } from '#server/features/provider-events/provider-event-reader.ts';
 
 const CHANGED = new Set(['funded', 'late', 'second', 'closed']);
 

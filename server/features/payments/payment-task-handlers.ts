@@ -1,7 +1,7 @@
 import { payoutTask } from '#server/features/payouts/payout-task.ts';
 import { transferTask } from '#server/features/payouts/transfer-task.ts';
 import { expireSessionTask } from './expire-session-task.ts';
-import type { ProviderTaskHandlers } from './provider-task-handler.ts';
+import type { ProviderTaskHandlers } from '#server/features/provider-tasks/provider-task-handler.ts';
 import { refundSecondTask } from './refund-second-task.ts';
 import { refundTask } from './refund-task.ts';
 

@@ -4,7 +4,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import { heldMinor } from '#server/features/ledger/ledger-queries.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { Refund } from '#server/models/refund.ts';
-import { enqueueProviderTask } from './enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 
 /**
  * Orders the refund of all that is held for a deal; the job sends it and books it when the provider took it. A deal has one

@@ -5,7 +5,7 @@ import { paymentClient } from '#server/integrations/clients.ts';
 import type { RefundReading } from '#server/integrations/payment-readings.ts';
 import { Deal } from '#server/models/deal.ts';
 import type { ProviderTask } from '#server/models/provider-task.ts';
-import { defineProviderTask } from './provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 import type { SecondPayment } from './return-second-payment.ts';
 
 const GONE: readonly RefundReading['status'][] = ['failed', 'canceled'];

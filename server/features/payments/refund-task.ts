@@ -9,7 +9,7 @@ import { Deal } from '#server/models/deal.ts';
 import { Payment } from '#server/models/payment.ts';
 import { Refund } from '#server/models/refund.ts';
 import { applyRefund } from './apply-refund.ts';
-import { defineProviderTask } from './provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 
 const GONE: readonly RefundReading['status'][] = ['failed', 'canceled'];
 

@@ -8,7 +8,7 @@ import { openMemberAccounts } from '#server/features/ledger/open-accounts.ts';
 import { postJournal } from '#server/features/ledger/post-journal.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { ProviderTask } from '#server/models/provider-task.ts';
-import { enqueueProviderTask } from './enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 import type { PaidCheckout } from './paid-checkout.ts';
 
 /** What the task that sends it back needs to know. */

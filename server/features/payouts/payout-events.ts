@@ -1,4 +1,4 @@
-import type { ProviderEventReader } from '#server/features/payments/provider-event-reader.ts';
+import type { ProviderEventReader } from '#server/features/provider-events/provider-event-reader.ts';
 import { findDealLocks } from '#server/features/payments/deal-locks.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
 import { applyPayout } from './apply-payout.ts';

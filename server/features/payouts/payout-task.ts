@@ -1,5 +1,5 @@
 import { invariant } from '#server/app-error.ts';
-import { defineProviderTask } from '#server/features/payments/provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
 import type { PayoutReading } from '#server/integrations/payment-readings.ts';
 import { Payout } from '#server/models/payout.ts';

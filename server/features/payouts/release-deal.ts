@@ -1,7 +1,7 @@
 import { ConflictError, invariant } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
-import { enqueueProviderTask } from '#server/features/payments/enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { PayoutAccount } from '#server/models/payout-account.ts';
 import { Payout } from '#server/models/payout.ts';

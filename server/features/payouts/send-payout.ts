@@ -1,5 +1,5 @@
 import type { Unit } from '#server/database/transaction.ts';
-import { enqueueProviderTask } from '#server/features/payments/enqueue-provider-task.ts';
+import { enqueueProviderTask } from '#server/features/provider-tasks/enqueue-provider-task.ts';
 import type { Deal } from '#server/models/deal.ts';
 import type { Payout } from '#server/models/payout.ts';
 

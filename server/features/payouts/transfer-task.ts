@@ -1,7 +1,7 @@
 import { invariant } from '#server/app-error.ts';
 import { recordDealEvent } from '#server/features/deals/move-deal.ts';
 import { postJournal } from '#server/features/ledger/post-journal.ts';
-import { defineProviderTask } from '#server/features/payments/provider-task-handler.ts';
+import { defineProviderTask } from '#server/features/provider-tasks/provider-task-handler.ts';
 import { paymentClient } from '#server/integrations/clients.ts';
 import type { TransferReading } from '#server/integrations/payment-readings.ts';
 import { Deal } from '#server/models/deal.ts';

@@ -10,7 +10,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import { dayRates } from '#server/features/quotes/quote-queries.ts';
 import type { Lot } from '#server/models/lot.ts';
 import { LotAssay } from '#server/models/lot-assay.ts';
-import { lotEntryOf } from './lot-entry.ts';
+import { lotEntryOf } from '#server/features/lots/lot-entry.ts';
 
 /** The columns that a lot is ranked by; written with the lot or once a day, never by a quote. */
 export type RankColumns = Pick<Lot, 'mainMetal' | 'mainFinenessPermille' | 'mainFineGrams' | 'rankPrice'>;

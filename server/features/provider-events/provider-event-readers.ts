@@ -1,6 +1,10 @@
 import { readAccountEvent } from '#server/features/onboarding/account-events.ts';
 import { readPayoutEvent } from '#server/features/payouts/payout-events.ts';
-import { readCheckoutEvent, readDeclineEvent, readRefundEvent } from './payment-events.ts';
+import {
+  readCheckoutEvent,
+  readDeclineEvent,
+  readRefundEvent,
+} from '#server/features/payments/payment-events.ts';
 import type { ProviderEventReader } from './provider-event-reader.ts';
 
 /** Messages that mean something to us. Any other type is answered and noted as ignored. */

@@ -3,7 +3,7 @@ import { AppError, ConflictError } from '#server/app-error.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import type { Lot } from '#server/models/lot.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { readOwnLot } from './own-lot.ts';
+import { readOwnLot } from '#server/features/lots/own-lot.ts';
 
 export type SaveDraftInput = { lotId: string; draft: LotDraft; version: number };
 

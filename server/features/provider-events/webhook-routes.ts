@@ -8,7 +8,7 @@ import type { PaymentEvent } from '#server/integrations/payment-readings.ts';
 import { logger } from '#server/logger.ts';
 import { ProviderEvent } from '#server/models/provider-event.ts';
 import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
-import { asRefusal } from './as-refusal.ts';
+import { asRefusal } from '#server/features/payments/as-refusal.ts';
 import { PROVIDER_EVENT_READERS } from './provider-event-readers.ts';
 import { countProviderEvent, recordProviderEvent, type EventOutcome } from './record-provider-event.ts';
 

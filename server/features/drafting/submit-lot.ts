@@ -13,8 +13,8 @@ import { Member } from '#server/models/member.ts';
 import { PayoutAccount } from '#server/models/payout-account.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { moveLot } from './move-lot.ts';
-import { readOwnLot } from './own-lot.ts';
+import { moveLot } from '#server/features/lots/move-lot.ts';
+import { readOwnLot } from '#server/features/lots/own-lot.ts';
 import { writeAssays, writeCertificate } from './write-evidence.ts';
 
 async function readSeller(unit: Unit, actor: Actor): Promise<Member> {
