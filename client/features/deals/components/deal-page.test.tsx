@@ -1,4 +1,4 @@
-import { screen, waitFor, within } from '@testing-library/react';
+import { cleanup, screen, waitFor, within } from '@testing-library/react';
 import userEvent from '@testing-library/user-event';
 import { http, HttpResponse } from 'msw';
 import { beforeEach, describe, expect, it, vi } from 'vitest';
@@ -280,5 +280,14 @@ describe('the deal page', () => {
     );
     expect(screen.getByText(/The payout came back/)).toHaveTextContent('account closed');
     expect(screen.getByText(/Back with the buyer/)).toHaveTextContent('4,121.35');
+  });
+
+  it('promises the seller nothing once the deal was cancelled', async () => {
+    const commission = { percent: '4', minimum: usd('2.00'), amount: usd('163.73'), net: usd('3957.62') };
+    await open(sampleDeal({ state: 'funded', side: 'seller', held, commission, can: noAbilities }));
+    expect(screen.getByRole('region', { name: 'The sums, US$' })).toHaveTextContent('Goes to you3,957.62');
+    cleanup();
+    await open(sampleDeal({ state: 'cancelled', side: 'seller', commission, due: null, can: noAbilities }));
+    expect(screen.getByRole('region', { name: 'The sums, US$' })).not.toHaveTextContent('3,957.62');
   });
 });

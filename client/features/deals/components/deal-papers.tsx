@@ -4,6 +4,7 @@ import { SettlementSheetView } from '../../../components/figures/settlement-shee
 /** The sheets of the deal, the final one first, and its documents. */
 export function DealPapers({ deal }: { deal: DealAnswer }) {
   const pdf = `/api/v1/deals/${encodeURIComponent(deal.code)}/sheet.pdf`;
+  const side = deal.side === 'desk' ? ', as the seller reads it' : '';
   return (
     <section aria-labelledby="deal-papers" className="mt-10 border-t border-rule pt-8">
       <div className="mb-4 flex flex-wrap items-baseline justify-between gap-x-8 gap-y-2">
@@ -29,8 +30,8 @@ export function DealPapers({ deal }: { deal: DealAnswer }) {
         </ul>
       </div>
       <div className={`grid gap-8 ${deal.finalSheet ? 'lg:grid-cols-2' : 'max-w-2xl'}`}>
-        {deal.finalSheet && <SettlementSheetView sheet={deal.finalSheet} title="Final sheet" />}
-        <SettlementSheetView sheet={deal.provisionalSheet} title="Provisional sheet" />
+        {deal.finalSheet && <SettlementSheetView sheet={deal.finalSheet} title={`Final sheet${side}`} />}
+        <SettlementSheetView sheet={deal.provisionalSheet} title={`Provisional sheet${side}`} />
       </div>
     </section>
   );

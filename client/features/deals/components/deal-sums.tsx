@@ -5,17 +5,22 @@ import { isNothing } from '../../../components/figures/deal-words.ts';
 
 type Line = { term: string; amount: string; isTotal?: boolean };
 
+/** In these nothing goes to the seller, whatever the provisional sheet says. */
+const endsUnpaid: readonly DealAnswer['state'][] = ['lapsed', 'cancelled', 'returned', 'reversed'];
+
+function totalTerm({ state, side }: DealAnswer): string {
+  if (state === 'lapsed') return 'Sum, never paid';
+  if (state !== 'agreed') return 'Paid into escrow';
+  return side === 'buyer' ? 'You pay into escrow' : 'The buyer pays into escrow';
+}
+
 function linesOf(deal: DealAnswer): Line[] {
   const lines: Line[] = [
     { term: 'Price of the metal', amount: deal.price.amount },
     { term: 'Insured parcel', amount: deal.shipping.amount },
-    {
-      term: deal.side === 'buyer' ? 'You pay into escrow' : 'The buyer pays into escrow',
-      amount: deal.total.amount,
-      isTotal: true,
-    },
+    { term: totalTerm(deal), amount: deal.total.amount, isTotal: true },
   ];
-  if (deal.commission === null) return lines;
+  if (deal.commission === null || endsUnpaid.includes(deal.state)) return lines;
   const { percent, amount, net } = deal.commission;
   return [
     ...lines,
