@@ -1,6 +1,6 @@
-import { pinDatabaseTime, withTransaction } from '#server/database/transaction.ts';
-import { importQuote } from '#server/features/quotes/import-quote.ts';
+import { pinDatabaseTime } from '#server/database/transaction.ts';
 import type { HistoricQuote } from '#server/integrations/quotes.ts';
+import { importQuotes } from './demo-quotes.ts';
 import { press } from './demo-services.ts';
 
 const DAY_MS = 86_400_000;
@@ -30,26 +30,27 @@ export class DemoClock {
   async goTo(moment: Date): Promise<void> {
     const offset = Math.trunc((moment.getTime() - Date.now()) / 1000);
     const step = offset - this.#offsetSeconds;
-    await press('payments', '/control/clock', { advanceSeconds: step });
-    await press('carrier', '/control/clock', { advanceSeconds: step });
     this.#offsetSeconds = offset;
     pinDatabaseTime(moment);
-    await this.#quoteAt(moment);
+    await Promise.all([this.#turnServices(step), this.#quoteAt(moment)]);
   }
 
   async backToNow(): Promise<void> {
-    await press('payments', '/control/clock', { advanceSeconds: -this.#offsetSeconds });
-    await press('carrier', '/control/clock', { advanceSeconds: -this.#offsetSeconds });
+    await this.#turnServices(-this.#offsetSeconds);
     this.#offsetSeconds = 0;
     pinDatabaseTime(null);
+  }
+
+  async #turnServices(advanceSeconds: number): Promise<void> {
+    const turn = (service: 'payments' | 'carrier') => press(service, '/control/clock', { advanceSeconds });
+    await Promise.all([turn('payments'), turn('carrier')]);
   }
 
   /** Each act finds a fresh quote with that day's value. */
   async #quoteAt(moment: Date): Promise<void> {
     const day = moment.toISOString().slice(0, 10);
     const at = new Date(moment.getTime() - 40_000);
-    for (const { metal, mid } of this.#history.filter((quote) => quote.date === day)) {
-      await withTransaction({}, (unit) => importQuote({ metal, mid, at, source: 'quote service' }, unit));
-    }
+    const quotes = this.#history.filter((quote) => quote.date === day);
+    await importQuotes(quotes.map(({ metal, mid }) => ({ metal, mid, at })));
   }
 }

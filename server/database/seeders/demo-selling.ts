@@ -10,11 +10,9 @@ import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
 import { DEMO_LABORATORIES } from './demo-people.ts';
 import type { DemoLot } from './demo-lot.ts';
+import { drawingsOf } from './demo-drawings.ts';
 import type { DemoPerson } from './demo-stage.ts';
 import { drawReport } from './draw-report.ts';
-import { drawSpecimen } from './draw-specimen.ts';
-
-const CAPTIONS = ['from above', 'from the side', 'underside'];
 
 /** The price that the seller asks: so many per cent of the melt value at that day's quotes, in whole cents. */
 async function priceOf(lot: DemoLot): Promise<string> {
@@ -27,11 +25,9 @@ async function priceOf(lot: DemoLot): Promise<string> {
   return dec(total.value).times(lot.percentOfMelt).div(100).toDecimalPlaces(2).toString();
 }
 
-async function addPhotos(lot: DemoLot, row: Lot, seller: DemoPerson, seed: number): Promise<void> {
+async function addPhotos(lot: DemoLot, row: Lot, seller: DemoPerson): Promise<void> {
   const actor = actorOf(await Member.findByPk(seller.id, { rejectOnEmpty: true }));
-  for (let index = 0; index < lot.photos; index += 1) {
-    const caption = CAPTIONS[index]!;
-    const content = await drawSpecimen(lot.form, caption, seed * 10 + index);
+  for (const [index, { caption, content }] of (await drawingsOf(lot)).entries()) {
     await uploadPhoto(row.id, { name: `${lot.key}-${index + 1}.jpg`, content }, actor, {
       isDrawing: true,
       caption,
@@ -76,16 +72,11 @@ async function addReport(
 }
 
 /** Writes the draft, adds drawings and report, and submits unless it stays a draft. Answers the lot's code. */
-export async function writeLot(
-  lot: DemoLot,
-  seller: DemoPerson,
-  seed: number,
-  issuedOn: string,
-): Promise<string> {
+export async function writeLot(lot: DemoLot, seller: DemoPerson, issuedOn: string): Promise<string> {
   const made = await seller.visitor.post('/api/v1/lots');
   const code = String(made.code);
   const row = await Lot.findOne({ where: { code }, rejectOnEmpty: true });
-  await addPhotos(lot, row, seller, seed);
+  await addPhotos(lot, row, seller);
   const contents = lot.contents.map(({ metal, permille, uncertainty, method, paidFor }) => ({
     metal,
     fineness: { value: permille, unit: 'permille' },

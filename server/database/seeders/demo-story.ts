@@ -27,7 +27,7 @@ function sellingActs({ clock, people }: Stage, memory: Memory): Act[] {
       hour: 7,
       minute: index,
       run: async () => {
-        memory.lots[lot.key] = await writeLot(lot, people[lot.seller], index + 1, issuedOn);
+        memory.lots[lot.key] = await writeLot(lot, people[lot.seller], issuedOn);
       },
     };
     if (lot.submitted === null) return [write];

@@ -8,25 +8,23 @@ import { runProviderTasks } from '#jobs/run-provider-tasks.ts';
 import { cancelUnshippedDeals } from '#jobs/cancel-unshipped-deals.ts';
 import { lapseUnfundedDealsJob } from '#jobs/lapse-unfunded-deals.ts';
 import { sequelize } from '#server/database/connection.ts';
-import { databaseNow, withTransaction } from '#server/database/transaction.ts';
-import { importQuote } from '#server/features/quotes/import-quote.ts';
+import { databaseNow } from '#server/database/transaction.ts';
 import { quoteClient } from '#server/integrations/clients.ts';
 import type { HistoricQuote } from '#server/integrations/quotes.ts';
 import { logger } from '#server/logger.ts';
 import { DemoClock } from './demo-clock.ts';
 import { DEMO_PEOPLE, DEMO_LABORATORIES } from './demo-people.ts';
+import { importQuotes } from './demo-quotes.ts';
 import { press } from './demo-services.ts';
 import { castOf, openPayouts, openStage } from './demo-stage.ts';
 import { tellStory, type Stage } from './demo-story.ts';
+import { drawAhead } from './demo-drawings.ts';
 
 const HISTORY_DAYS = 60;
 
 /** Sixty days of quotes, one a day, as the service itself remembers them. */
-async function importHistory(history: readonly HistoricQuote[], until: Date): Promise<void> {
-  for (const { metal, mid, at } of history) {
-    if (at >= until) continue;
-    await withTransaction({}, (unit) => importQuote({ metal, mid, at, source: 'quote service' }, unit));
-  }
+function importHistory(history: readonly HistoricQuote[], until: Date): Promise<void> {
+  return importQuotes(history.filter(({ at }) => at < until));
 }
 
 /** Readable aloud, and another one in every data folder. */
@@ -60,6 +58,7 @@ async function runDueWork(): Promise<void> {
 export async function seedDemo(): Promise<void> {
   const file = process.env.DEMO_ACCOUNTS_FILE;
   const begun = new Date();
+  drawAhead();
   const from = new Date(begun.getTime() - HISTORY_DAYS * 86_400_000);
   const history = await quoteClient().fetchHistory(from, begun);
   const clock = new DemoClock(begun, history);
