@@ -1,0 +1,25 @@
+import express from 'express';
+import supertest from 'supertest';
+import { describe, expect, it } from 'vitest';
+import { RATE_LIMITS } from '#shared/limits.ts';
+import { env } from '#server/env.ts';
+import { errorHandler } from '#server/middleware/error-handler.ts';
+import { rateLimited } from '#server/middleware/rate-limit.ts';
+
+const app = express();
+app.use(express.json());
+app.post('/sign-in', rateLimited('sign-in'), (_req, res) => void res.json({}));
+app.use(errorHandler);
+const allowed = RATE_LIMITS['sign-in'].requestsMax * env.RATE_LIMIT_FACTOR;
+const tryIt = (email: string) => supertest(app).post('/sign-in').send({ email });
+
+describe('the limit on sign-in', () => {
+  it('lets so many tries through and then answers 429 with a problem document, for that account alone', async () => {
+    for (let index = 0; index < allowed; index += 1) await tryIt('ilse@scruple.example').expect(200);
+    const refused = await tryIt('ILSE@scruple.example');
+    expect(refused.status).toBe(429);
+    expect(refused.body).toMatchObject({ code: 'too-many-requests', status: 429 });
+    expect(Number.parseInt(String(refused.headers['retry-after']), 10)).toBeGreaterThan(0);
+    await tryIt('other@scruple.example').expect(200);
+  }, 60_000);
+});
