@@ -8,6 +8,7 @@ import { reconcilePaymentsJob } from './reconcile-payments.ts';
 import { runChecksJob } from './run-checks.ts';
 import { closeLotsJob } from './close-lots.ts';
 import { rekeyLotsJob } from './rekey-lots.ts';
+import { removeStrayFilesJob } from './remove-stray-files.ts';
 import type { Job } from './run-job.ts';
 
 /** Every job of the product; `npm run job -- <name>` runs one by hand. */
@@ -22,4 +23,5 @@ export const allJobs: readonly Job[] = [
   runChecksJob,
   closeLotsJob,
   rekeyLotsJob,
+  removeStrayFilesJob,
 ];

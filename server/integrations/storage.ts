@@ -1,5 +1,5 @@
 import { createReadStream } from 'node:fs';
-import { access, mkdir, rename, rm, writeFile } from 'node:fs/promises';
+import { access, mkdir, readdir, rename, rm, stat, writeFile } from 'node:fs/promises';
 import path from 'node:path';
 import { randomUUID } from 'node:crypto';
 import type { Readable } from 'node:stream';
@@ -14,7 +14,11 @@ export type Storage = {
   get(key: string): Promise<Readable | null>;
   /** Removes the object; no complaint when it is gone already. */
   remove(key: string): Promise<void>;
+  /** Every object, halves of broken writes included, and when it was written last; in no order. */
+  list(): AsyncIterable<StoredObject>;
 };
+
+export type StoredObject = { key: string; changedAt: Date };
 
 const KEY = /^[a-z0-9]+(?:[/_-][a-z0-9]+)*(?:\.[a-z0-9]+)?$/;
 
@@ -26,6 +30,18 @@ function codeOf(error: unknown): unknown {
   return (error as { code?: unknown } | null)?.code;
 }
 
+async function* filesUnder(folder: string): AsyncGenerator<string> {
+  const entries = await readdir(folder, { withFileTypes: true }).catch((error: unknown) => {
+    if (codeOf(error) === 'ENOENT') return [];
+    throw error;
+  });
+  for (const entry of entries) {
+    const place = path.join(folder, entry.name);
+    if (entry.isDirectory()) yield* filesUnder(place);
+    else if (entry.isFile()) yield place;
+  }
+}
+
 /** A folder on this machine. A file appears under its name only when it is complete. */
 export function createFolderStorage(folder: string): Storage {
   const fileOf = (key: string) => {
@@ -35,7 +51,7 @@ export function createFolderStorage(folder: string): Storage {
   return {
     async put(key, content) {
       const file = fileOf(key);
-      const half = `${file}.${randomUUID()}.part`;
+      const half = path.join(path.dirname(file), `${randomUUID()}.part`);
       try {
         await mkdir(path.dirname(file), { recursive: true });
         await writeFile(half, content, { flush: true });
@@ -58,6 +74,13 @@ export function createFolderStorage(folder: string): Storage {
     },
     async remove(key) {
       await rm(fileOf(key), { force: true });
+    },
+    async *list() {
+      for await (const file of filesUnder(folder)) {
+        const key = path.relative(folder, file).split(path.sep).join('/');
+        const found = await stat(file).catch(() => null);
+        if (found !== null && KEY.test(key)) yield { key, changedAt: found.mtime };
+      }
     },
   };
 }
@@ -98,6 +121,18 @@ export function createBucketStorage(bucket: string): Storage {
       assertKey(key);
       const { sdk, client } = await ready();
       await client.send(new sdk.DeleteObjectCommand({ Bucket: bucket, Key: key }));
+    },
+    async *list() {
+      const { sdk, client } = await ready();
+      for (let from: string | undefined; ;) {
+        const order = { Bucket: bucket, ...(from === undefined ? {} : { ContinuationToken: from }) };
+        const page = await client.send(new sdk.ListObjectsV2Command(order));
+        for (const { Key: key, LastModified: changedAt } of page.Contents ?? []) {
+          if (key !== undefined && changedAt !== undefined && KEY.test(key)) yield { key, changedAt };
+        }
+        from = page.NextContinuationToken;
+        if (from === undefined) return;
+      }
     },
   };
 }

@@ -2,6 +2,7 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import { lotAnswer, type LotAnswer, type LotDraft, lotDraft, myLotsAnswer } from '#shared/schemas/lots.ts';
 import { databaseNow, withTransaction } from '#server/database/transaction.ts';
 import { openLot } from '#server/features/lots/open-lot.ts';
+import { uploadPhoto } from '#server/features/photos/upload-photo.ts';
 import { Certificate } from '#server/models/certificate.ts';
 import { Lot } from '#server/models/lot.ts';
 import { LotAssay } from '#server/models/lot-assay.ts';
@@ -9,6 +10,7 @@ import { LotEvent } from '#server/models/lot-event.ts';
 import { Member } from '#server/models/member.ts';
 import { buildLot, buildRates, completeDraft, pdfBytes } from '#tests/factories/build-lot.ts';
 import { buildMember, type BuiltMember } from '#tests/factories/build-member.ts';
+import { photoBytes } from '#tests/helpers/test-photo.ts';
 import { startTestApp, type TestApp, type Visitor } from '#tests/helpers/test-app.ts';
 
 let app: TestApp;
@@ -129,6 +131,31 @@ describe('drafting', () => {
     await asSeller.post('/api/v1/lots', { copyOf: closed.code }).expect(404);
     const { code } = await newDraft();
     await asSeller.post('/api/v1/lots', { copyOf: code }).expect(409);
+  });
+
+  it('takes the photos of the lot along, as copies of their own', async () => {
+    const source = await readyDraft();
+    const { id } = await Lot.findOne({ where: { code: source.code }, rejectOnEmpty: true });
+    for (const name of ['first.jpg', 'second.jpg']) {
+      const photo = { name, content: await photoBytes() };
+      await uploadPhoto(id, photo, seller.actor, { caption: name, isDrawing: name === 'second.jpg' });
+    }
+    await asSeller.post(`/api/v1/lots/${source.code}/submit`).expect(200);
+    const { body } = await asSeller.post('/api/v1/lots', { copyOf: source.code }).expect(201);
+    const { photos } = body as LotAnswer;
+    expect(photos.map(({ caption, isDrawing }) => [caption, isDrawing])).toEqual([
+      ['first.jpg', false],
+      ['second.jpg', true],
+    ]);
+    const originals = ((await asSeller.get(`/api/v1/lots/${source.code}`)).body as LotAnswer).photos;
+    const [copy, original] = await Promise.all([
+      asSeller.get(photos[0]!.medium).expect(200),
+      asSeller.get(originals[0]!.medium).expect(200),
+    ]);
+    expect((copy.body as Buffer).equals(original.body as Buffer)).toBe(true);
+    await asSeller.delete(`/api/v1/lots/${body.code}/draft`).expect(204);
+    await asSeller.get(originals[0]!.medium).expect(200);
+    await asSeller.get(photos[0]!.medium).expect(404);
   });
 
   it('deletes a draft that the desk never saw, and no other', async () => {

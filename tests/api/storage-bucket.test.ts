@@ -17,6 +17,17 @@ const service = createServer((req, res) => {
       objects.delete(name);
       return res.writeHead(204).end();
     }
+    const { searchParams } = new URL(req.url ?? '', 'http://bucket.example');
+    if (searchParams.get('list-type') === '2') {
+      // One object a page, so that the next page is asked for.
+      const keys = [...objects.keys()].map((key) => key.replace('/lots/', '')).sort();
+      const at = keys.indexOf(searchParams.get('continuation-token') ?? keys[0] ?? '');
+      const next = keys[at + 1];
+      const entry = `<Contents><Key>${keys[at]}</Key><LastModified>2026-12-01T08:00:00.000Z</LastModified></Contents>`;
+      const more = next === undefined ? '' : `<NextContinuationToken>${next}</NextContinuationToken>`;
+      const list = `<ListBucketResult><IsTruncated>${next !== undefined}</IsTruncated>${more}${entry}</ListBucketResult>`;
+      return res.writeHead(200, { 'Content-Type': 'application/xml' }).end(`<?xml version="1.0"?>${list}`);
+    }
     const found = objects.get(name);
     if (found !== undefined) return res.writeHead(200, { 'Content-Type': found.type }).end(found.content);
     const missing = '<?xml version="1.0"?><Error><Code>NoSuchKey</Code></Error>';
@@ -48,5 +59,19 @@ describe('a bucket', () => {
     await storage.remove('photos/a/240.webp');
     expect(await storage.get('photos/a/240.webp')).toBeNull();
     await expect(storage.put('../secret', Buffer.from('x'), 'text/plain')).rejects.toThrow('storage key');
+  });
+
+  it('lists its objects page by page', async () => {
+    for (const key of ['photos/b/240.webp', 'photos/a/240.webp', 'certificates/c/d']) {
+      await storage.put(key, Buffer.from('x'), 'image/webp');
+    }
+    const listed = [];
+    for await (const { key, changedAt } of storage.list()) listed.push([key, changedAt.toISOString()]);
+    const at = '2026-12-01T08:00:00.000Z';
+    expect(listed).toEqual([
+      ['certificates/c/d', at],
+      ['photos/a/240.webp', at],
+      ['photos/b/240.webp', at],
+    ]);
   });
 });

@@ -11,6 +11,7 @@ export const AUDIT_SUBJECTS = [
   'laboratory',
   'quote',
   'fee_schedule',
+  'file',
 ] as const;
 export type AuditSubject = (typeof AUDIT_SUBJECTS)[number];
 

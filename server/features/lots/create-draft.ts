@@ -20,7 +20,7 @@ async function draftToCopy(code: string, unit: Unit, actor: Actor): Promise<LotD
 }
 
 /**
- * Makes a draft of the actor's own: blank, or with what was typed for another lot of his (photos stay with that one).
+ * Makes a draft of the actor's own: blank, or with what was typed for another lot of his; its photos are the caller's to add.
  * Anyone who may sell may draft; payout onboarding is asked for at submission.
  * Throws `forbidden`, `member-suspended`, `not-found` for a lot to copy that is not there,
  * `illegal-transition` for one that is a draft itself.

@@ -9,7 +9,9 @@ import {
   saveDraftRequest,
 } from '#shared/schemas/lots.ts';
 import { withTransaction, type Unit } from '#server/database/transaction.ts';
+import { addCopies, dropCopies, storeCopies } from '#server/features/photos/copy-photos.ts';
 import { removeFiles } from '#server/features/photos/remove-files.ts';
+import type { Lot } from '#server/models/lot.ts';
 import {
   defineRoute,
   type Actor,
@@ -40,6 +42,21 @@ async function changeLot<B>(
   const lotId = await lotIdOf(params.code);
   await withTransaction({ lots: [lotId] }, (unit) => command(lotId, unit, actor));
   res.json(await answerLot(params.code, actor));
+}
+
+/** A copy takes the photos along: their bytes are stored first, and go again when no draft comes of it. */
+async function makeDraft({ copyOf }: { copyOf?: string | undefined }, actor: Actor): Promise<Lot> {
+  const copies = copyOf === undefined ? [] : await storeCopies(copyOf, actor);
+  try {
+    return await withTransaction({}, async (unit) => {
+      const lot = await createDraft({ copyOf }, unit, actor);
+      await addCopies({ lotId: lot.id, copies }, unit, actor);
+      return lot;
+    });
+  } catch (error) {
+    await dropCopies(copies);
+    throw error;
+  }
 }
 
 /** A change of state that needs no more than the lot's code. */
@@ -90,13 +107,13 @@ const draftRoutes: RouteDefinition[] = [
   defineRoute({
     method: 'post',
     path: '/api/v1/lots',
-    summary: 'A new draft, blank or as a copy of an own lot',
+    summary: 'A new draft, blank or as a copy of an own lot, photos included',
     access: 'member',
     limit: 'write',
     body: z.object({ copyOf: lotCode.optional() }),
     answer: lotAnswer,
     handle: async ({ body, res, actor }) => {
-      const lot = await withTransaction({}, (unit) => createDraft(body, unit, actor));
+      const lot = await makeDraft(body, actor);
       res.status(201).location(`/api/v1/lots/${lot.code}`);
       res.json(await answerLot(lot.code, actor));
     },
