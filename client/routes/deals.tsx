@@ -1,7 +1,5 @@
-import { isRouted } from '../app/routes.tsx';
 import { dealsQuery } from '../lib/deals.ts';
 import { DealsPage } from '../features/deals/components/deals-page.tsx';
-import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';
 
 export async function loader(): Promise<null> {
@@ -10,5 +8,5 @@ export async function loader(): Promise<null> {
 }
 
 export function Component() {
-  return <DealsPage hasRegister={isRouted(paths.register())} />;
+  return <DealsPage />;
 }

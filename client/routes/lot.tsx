@@ -1,8 +1,6 @@
 import { useParams, type LoaderFunctionArgs } from 'react-router-dom';
-import { isRouted } from '../app/routes.tsx';
 import { lotQuery } from '../lib/lot-query.ts';
 import { LotPage } from '../features/market/components/lot-page.tsx';
-import { paths } from '../lib/paths.ts';
 import { queryClient } from '../lib/query-client.ts';
 import { sessionQuery } from '../lib/session.ts';
 
@@ -13,5 +11,5 @@ export async function loader({ params }: LoaderFunctionArgs): Promise<null> {
 
 export function Component() {
   const { code = '' } = useParams();
-  return <LotPage code={code} hasCautionsPage={isRouted(paths.cautions())} />;
+  return <LotPage code={code} />;
 }

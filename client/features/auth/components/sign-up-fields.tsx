@@ -2,7 +2,7 @@ import { PASSWORD_LENGTH_MIN } from '#shared/limits.ts';
 import { Field, FieldError } from '../../../components/ui/field.tsx';
 import { Checkbox, Select, TextInput } from '../../../components/ui/inputs.tsx';
 import { TIME_ZONES, timeZoneName } from '../../../lib/time-zones.ts';
-import type { SignUpValues } from './sign-up-page.tsx';
+import type { SignUpValues } from '../sign-up-values.ts';
 
 type Name = keyof SignUpValues & string;
 type SignUpFieldsProps = {

@@ -10,23 +10,14 @@ import { guessedTimeZone } from '../../../lib/time-zones.ts';
 import { readBy, useForm } from '../../../lib/use-form.ts';
 import { signUp } from '../api/sign-up.ts';
 import { useEnter } from '../hooks/use-enter.ts';
+import { blankSignUp, type SignUpValues } from '../sign-up-values.ts';
 import { SignUpFields } from './sign-up-fields.tsx';
-
-const blank = {
-  email: '',
-  password: '',
-  displayName: '',
-  region: '',
-  timeZone: 'UTC',
-  isOfAge: false,
-};
-export type SignUpValues = typeof blank;
 
 type SignUpPageProps = { next: string };
 
 export function SignUpPage({ next }: SignUpPageProps) {
   const form = useForm({
-    initial: { ...blank, timeZone: guessedTimeZone() } as SignUpValues,
+    initial: { ...blankSignUp, timeZone: guessedTimeZone() } as SignUpValues,
     read: (values) => readBy(signUpRequest, values),
     send: signUp,
     onDone: useEnter(next),

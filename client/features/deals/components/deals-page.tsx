@@ -22,10 +22,8 @@ function Part({ id, title, rows, empty }: PartProps) {
   );
 }
 
-type DealsPageProps = { hasRegister: boolean };
-
 /** Where I stand: what waits for me, what runs without me, what is over. */
-export function DealsPage({ hasRegister }: DealsPageProps) {
+export function DealsPage() {
   const { data } = useSuspenseQuery(dealsQuery);
   const isEmpty = data.toDo.length + data.running.length + data.closed.length === 0;
   return (
@@ -35,7 +33,7 @@ export function DealsPage({ hasRegister }: DealsPageProps) {
         <EmptyState
           title="No deal yet"
           drawing={<SpecimenDrawing form="bar" label={null} />}
-          action={hasRegister && <LinkButton to={paths.register()}>Open the register of lots</LinkButton>}
+          action={<LinkButton to={paths.register()}>Open the register of lots</LinkButton>}
         >
           A deal begins when you buy a lot, or somebody buys yours. From then on it stands here, with what is
           due next and what silence will mean.

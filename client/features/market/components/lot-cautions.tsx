@@ -25,9 +25,9 @@ export function cautionsFor(lot: Pick<LotAnswer, 'form' | 'contents'>): string[]
   return cautions;
 }
 
-type LotCautionsProps = { lot: LotAnswer; hasCautionsPage: boolean };
+type LotCautionsProps = { lot: LotAnswer };
 
-export function LotCautions({ lot, hasCautionsPage }: LotCautionsProps) {
+export function LotCautions({ lot }: LotCautionsProps) {
   return (
     <section aria-labelledby="lot-cautions">
       <h2 id="lot-cautions">Cautions</h2>
@@ -37,15 +37,10 @@ export function LotCautions({ lot, hasCautionsPage }: LotCautionsProps) {
         ))}
       </ul>
       <p className="mt-3 max-w-prose text-ink-2">
-        Check your local rules; this is not legal advice.
-        {hasCautionsPage && (
-          <>
-            {' '}
-            <Link to={paths.cautions()} className="link">
-              All cautions
-            </Link>
-          </>
-        )}
+        Check your local rules; this is not legal advice.{' '}
+        <Link to={paths.cautions()} className="link">
+          All cautions
+        </Link>
       </p>
     </section>
   );

@@ -22,10 +22,10 @@ import { QuoteStateNotice } from './quote-state-notice.tsx';
 import { lotFormOf } from './register-row-parts.tsx';
 import { SellerNets } from './seller-nets.tsx';
 
-type LotPageProps = { code: string; hasCautionsPage: boolean };
+type LotPageProps = { code: string };
 
 /** All that is public of one lot: what it is, who says so, what it is worth, what it costs. */
-export function LotPage({ code, hasCautionsPage }: LotPageProps) {
+export function LotPage({ code }: LotPageProps) {
   const { data: lot } = useSuspenseQuery(lotQuery(code));
   const member = useMember();
   return (
@@ -63,7 +63,7 @@ export function LotPage({ code, hasCautionsPage }: LotPageProps) {
         </div>
       </div>
       <div className="mt-10 grid gap-x-10 gap-y-8 border-t border-rule pt-8 lg:grid-cols-2">
-        <LotCautions lot={lot} hasCautionsPage={hasCautionsPage} />
+        <LotCautions lot={lot} />
         <LotHistory history={lot.history} />
       </div>
     </Page>

@@ -14,7 +14,7 @@ import { Field } from '../../../components/ui/field.tsx';
 import { NumberInput } from '../../../components/ui/inputs.tsx';
 import { ApiProblem } from '../../../lib/api-client.ts';
 import { formatMoney, formatPercent } from '../../../lib/format.ts';
-import { useLotAct } from './lot-acts.tsx';
+import { useLotAct } from '../hooks/use-lot-act.ts';
 
 type Read = { minor: bigint; error: null } | { minor: null; error: string };
 

@@ -5,7 +5,7 @@ import { Button } from '../../../components/ui/button.tsx';
 import { useErrorTitle } from '../../../components/ui/error-summary.tsx';
 import { Field } from '../../../components/ui/field.tsx';
 import { Textarea } from '../../../components/ui/inputs.tsx';
-import { useLotAct } from './lot-acts.tsx';
+import { useLotAct } from '../hooks/use-lot-act.ts';
 
 type WithdrawFormProps = { lot: LotAnswer; onClose: () => void };
 
