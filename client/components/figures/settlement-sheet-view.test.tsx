@@ -88,7 +88,7 @@ const sheet: SettlementSheet = {
   percentOfMelt: '98.20',
   shipping: '28.00',
   total: '4121.35',
-  assumed: [{ field: '/readability', value: '0.0001 g', reason: 'one unit of the last digit typed' }],
+  assumed: [{ field: '/readability', value: '0.0001 g', reason: 'One unit of the last digit.' }],
 };
 
 function show(given: SettlementSheet = sheet) {
@@ -143,7 +143,9 @@ describe('SettlementSheetView', () => {
     expect(screen.getByText(/95 % range/)).toHaveTextContent(
       '95 % range US$ 4,160 to 4,180 · price at 98.20 % of melt',
     );
-    expect(screen.getByText('0.0001 g: one unit of the last digit typed')).toBeInTheDocument();
+    expect(
+      screen.getByText('Readability of the balance: 0.0001 g. One unit of the last digit.'),
+    ).toBeInTheDocument();
   });
 
   it('says at which moment it stands', () => {

@@ -100,7 +100,7 @@ function SheetNotes({ sheet }: { sheet: SettlementSheet }) {
           <ul className="list-disc pl-5">
             {sheet.assumed.map((item) => (
               <li key={item.field}>
-                {item.value}: {item.reason}
+                {assumedName(item.field)} {item.value}. {item.reason}
               </li>
             ))}
           </ul>
@@ -108,6 +108,10 @@ function SheetNotes({ sheet }: { sheet: SettlementSheet }) {
       )}
     </div>
   );
+}
+
+function assumedName(field: string): string {
+  return field.endsWith('/readability') ? 'Readability of the balance:' : 'Expanded uncertainty:';
 }
 
 function QuoteLine({ quote }: { quote: QuoteRef }) {

@@ -1,3 +1,4 @@
+import { usdText } from '#server/emails/mail-text.ts';
 import type { DealEvent } from '#server/models/deal-event.ts';
 import { CONTEST_REASON_LABELS } from './contest-reasons.ts';
 
@@ -22,7 +23,8 @@ const TEXTS: Readonly<Record<string, (detail: Detail) => string>> = {
   'late-payment': () => 'A payment came after the lapse and is sent back',
   'second-payment': () => 'A second payment came in and is sent back',
   'second-refunded': () => 'The second payment is sent back',
-  shipped: (detail) => `Shipped with ${word(detail, 'carrier')}, insured for US$ ${word(detail, 'insured')}`,
+  shipped: (detail) =>
+    `Shipped with ${word(detail, 'carrier')}, insured for ${usdText(word(detail, 'insured'))}`,
   'parcel-moved': (detail) => `Parcel: ${word(detail, 'status').replaceAll('_', ' ')}`,
   'parcel-lost': () => 'The carrier declares the parcel lost',
   'parcel-returned': () => 'The carrier brought the parcel back to the sender',
@@ -40,6 +42,8 @@ const TEXTS: Readonly<Record<string, (detail: Detail) => string>> = {
   'payout-failed': () => 'The payout came back',
   cancelled: (detail) => word(detail, 'reason') || 'Cancelled',
   contested: contestText,
+  'taken-up': (detail) =>
+    `Taken up by the desk: the time to inspect is over. ${word(detail, 'reason')}`.trim(),
   'ruled-refund': (detail) => `The desk ruled: refund in full. ${word(detail, 'reason')}`.trim(),
   'ruled-release': (detail) => `The desk ruled: release to the seller. ${word(detail, 'reason')}`.trim(),
   'refund-due': () => 'Refund ordered',

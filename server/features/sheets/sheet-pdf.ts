@@ -50,6 +50,16 @@ function grouped(number: string): string {
   return `${sign}${head}${decimals === undefined ? '' : `.${decimals}`}`;
 }
 
+/** A rate in money has its cents, and more decimals only where it has more. */
+function withCents(number: string): string {
+  const [whole = '0', decimals = ''] = number.split('.');
+  return `${whole}.${decimals.padEnd(2, '0')}`;
+}
+
+function assumedName(field: string): string {
+  return field.endsWith('/readability') ? 'Assumed readability:' : 'Assumed expanded uncertainty:';
+}
+
 function momentText(at: Date | string, timeZone: string): string {
   return `${format(new TZDate(new Date(at).getTime(), timeZone), 'd MMMM yyyy, HH:mm')} (${timeZone})`;
 }
@@ -153,8 +163,9 @@ function lineRow(doc: Doc, line: SheetLine): void {
     unitAfter(doc, line.quantity.value, line.quantity.unit, COLUMNS.quantity, y + 0.5);
   }
   if (line.rate !== null) {
-    figureAtDot(doc, line.rate.value, COLUMNS.rate, y + 0.5);
-    unitAfter(doc, line.rate.value, line.rate.unit, COLUMNS.rate, y + 0.5);
+    const rate = line.rate.unit.startsWith('US$') ? withCents(line.rate.value) : line.rate.value;
+    figureAtDot(doc, rate, COLUMNS.rate, y + 0.5);
+    unitAfter(doc, rate, line.rate.unit, COLUMNS.rate, y + 0.5);
   }
   if (line.amount !== null) figureAtDot(doc, line.amount, COLUMNS.amount, y + 0.5);
   doc.y = y + 15;
@@ -168,13 +179,13 @@ function lineRow(doc: Doc, line: SheetLine): void {
 function noteLines({ sheet, timeZone }: SheetPdfInput): string[] {
   const quotes = sheet.quotes.map(({ metal, usdPerTroyOunce, at, source, id }) => {
     const when = at === null ? '' : `, quote of ${momentText(at, timeZone)}`;
-    return `${METAL_NAMES[metal]}: US$ ${grouped(usdPerTroyOunce)} per oz t fine${when}, ${source}${id === null ? '' : `, no. ${id}`}.`;
+    return `${METAL_NAMES[metal]}: US$ ${grouped(withCents(usdPerTroyOunce))} per oz t fine${when}, ${source}${id === null ? '' : `, no. ${id}`}.`;
   });
   const { low, high } = sheet.melt;
   return [
     `Melt value with 95 % range: US$ ${grouped(low)} to ${grouped(high)}.`,
     ...quotes,
-    ...sheet.assumed.map(({ value, reason }) => `Assumed: ${value}. ${reason}`),
+    ...sheet.assumed.map(({ field, value, reason }) => `${assumedName(field)} ${value}. ${reason}`),
     `Computed by rules version ${sheet.engineVersion}; it recomputes from what is stored, to the cent.`,
   ];
 }

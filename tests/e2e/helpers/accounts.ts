@@ -8,12 +8,17 @@ export function demoPassword(): string {
   return password;
 }
 
-/** Signs in on the page and goes on to `next`. */
-export async function signIn(page: Page, who: string, next = '/'): Promise<void> {
-  await page.goto(`/sign-in?next=${encodeURIComponent(next)}`);
+/** Fills in the form of the page that is open and sends it. */
+export async function fillSignIn(page: Page, who: string): Promise<void> {
   await page.getByRole('textbox', { name: 'E-mail' }).fill(`${who}@scruple.example`);
   await page.getByLabel('Password').fill(demoPassword());
   await page.getByRole('button', { name: 'Sign in' }).click();
+}
+
+/** Signs in on the page and goes on to `next`. */
+export async function signIn(page: Page, who: string, next = '/'): Promise<void> {
+  await page.goto(`/sign-in?next=${encodeURIComponent(next)}`);
+  await fillSignIn(page, who);
   await page.waitForURL((url) => url.pathname + url.search === next);
 }
 

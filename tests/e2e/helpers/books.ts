@@ -1,23 +1,7 @@
-import mariadb from 'mariadb';
 import { inject } from 'vitest';
+import { query } from './database.ts';
 
 type Books = { balances: Record<string, number>; sum: number; differences: unknown[] };
-
-async function query<T>(sql: string, values: unknown[] = []): Promise<T[]> {
-  const url = new URL(inject('productDatabaseUrl'));
-  const connection = await mariadb.createConnection({
-    host: url.hostname,
-    port: Number.parseInt(url.port, 10),
-    user: decodeURIComponent(url.username),
-    password: decodeURIComponent(url.password),
-    database: url.pathname.slice(1),
-  });
-  try {
-    return (await connection.query(sql, values)) as T[];
-  } finally {
-    await connection.end();
-  }
-}
 
 type Sum = { kind: string; providerAccountId: string | null; cents: string };
 

@@ -143,7 +143,7 @@ function Confirmations({ form, errors, onChange }: ConfirmationsProps) {
       {box(
         'confirmsRules',
         'I buy at the stated assay, and I will weigh and check what arrives before I accept it.',
-        `A difference in mass or metal is reported before accepting; then the money stays in escrow and the assay desk looks at it. After a signed delivery, ${INSPECT_DAYS} days without a word count as acceptance. Licences and tax are yours: check your local rules; this is not legal advice.`,
+        `A difference in mass or metal is reported before accepting; then the money stays in escrow and the assay desk looks at it. You have ${INSPECT_DAYS} days from the delivery to look; nothing is accepted by silence. Licences and tax are yours: check your local rules; this is not legal advice.`,
       )}
     </fieldset>
   );

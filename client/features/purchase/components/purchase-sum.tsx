@@ -43,8 +43,7 @@ export function PurchaseSum({ lot, total }: PurchaseSumProps) {
         </div>
       </dl>
       <p className="py-3 text-note text-ink-2">
-        Nothing more comes on top. The seller is paid when you accept, or when the time to inspect ends after
-        a signed delivery.
+        Nothing more comes on top. The seller is paid when you accept; until then the money is held.
       </p>
     </div>
   );
