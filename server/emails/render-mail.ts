@@ -56,7 +56,7 @@ function paragraph(text: string): string {
 }
 
 function factRow({ label, value }: { label: string; value: string }): string {
-  return `<tr><td class="quiet rule" style="padding:7px 12px 7px 0;border-top:1px solid #d8d1c3;color:#566064;vertical-align:top">${escapeHtml(label)}</td><td class="rule" style="padding:7px 0;border-top:1px solid #d8d1c3;text-align:right;${FIGURES};font-size:14px">${escapeHtml(value)}</td></tr>`;
+  return `<tr><td class="quiet rule" style="padding:7px 12px 7px 0;overflow-wrap:normal;border-top:1px solid #d8d1c3;color:#566064;vertical-align:top">${escapeHtml(label)}</td><td class="rule" style="padding:7px 0;border-top:1px solid #d8d1c3;text-align:right;${FIGURES};font-size:14px">${escapeHtml(value)}</td></tr>`;
 }
 
 function renderHtml(content: MailContent, reader: MailReader, address: string | null): string {
