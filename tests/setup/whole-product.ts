@@ -19,15 +19,17 @@ declare module 'vitest' {
 export default async function setup(project: TestProject): Promise<() => Promise<void>> {
   const { folder, remove } = await makeThrowAwayFolder();
   try {
-    const product = await startProduct({ dataFolder: path.join(folder, 'data') });
-    const { urls, env } = product.ready;
+    // All people of these tests come from one address, and in a few minutes.
+    const env = { RATE_LIMIT_FACTOR: '20' };
+    const product = await startProduct({ dataFolder: path.join(folder, 'data'), env });
+    const { urls, env: given } = product.ready;
     project.provide('baseUrl', urls.product);
     project.provide('mailboxUrl', urls.mailbox);
     project.provide('paymentsUrl', urls.payments);
     project.provide('carrierUrl', urls.carrier);
     project.provide('quotesUrl', urls.quotes);
-    project.provide('productDatabaseUrl', env.DATABASE_OWNER_URL);
-    project.provide('demoAccountsFile', env.DEMO_ACCOUNTS_FILE);
+    project.provide('productDatabaseUrl', given.DATABASE_OWNER_URL);
+    project.provide('demoAccountsFile', given.DEMO_ACCOUNTS_FILE);
     return async () => {
       await product.stop();
       remove();

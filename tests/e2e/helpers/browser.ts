@@ -1,14 +1,7 @@
-import { chromium, type Browser, type BrowserContextOptions, type Page } from 'playwright-core';
+import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, expect, inject } from 'vitest';
+import { launchBrowser } from './launch-browser.ts';
 import { keepFailure, wide } from './pictures.ts';
-
-const args = [
-  '--disable-quic',
-  '--no-first-run',
-  '--disable-background-networking',
-  '--disable-component-update',
-  '--disable-sync',
-];
 
 /** What a page said that it should not have: uncaught errors, and errors of the console that are no refusal of the API. */
 const complaints: string[] = [];
@@ -21,11 +14,6 @@ function listen(page: Page): void {
       complaints.push(`${page.url()}: ${message.text()}`);
     }
   });
-}
-
-/** Debian's Chromium. */
-export function launchBrowser(): Promise<Browser> {
-  return chromium.launch({ executablePath: process.env.CHROMIUM_PATH ?? '/usr/bin/chromium', args });
 }
 
 /** One browser for a file, and people in it who share nothing with each other. */
