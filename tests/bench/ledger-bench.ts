@@ -4,6 +4,7 @@ import { withTransaction } from '#server/database/transaction.ts';
 import { accountIdOf, type AccountRef } from '#server/features/ledger/account-ref.ts';
 import { postJournal } from '#server/features/ledger/post-journal.ts';
 import { buildDeal } from '#tests/factories/build-deal.ts';
+import { buildRates } from '#tests/factories/build-lot.ts';
 import { buildMember } from '#tests/factories/build-member.ts';
 import { inTwo, printTable } from './timing.ts';
 
@@ -103,6 +104,7 @@ export async function benchLedger(databaseUrl: string): Promise<void> {
     bigIntAsNumber: true,
   });
   try {
+    await buildRates();
     const [seller, buyer] = [await buildMember({ canSell: true }), await buildMember()];
     const dealIds: string[] = [];
     for (let count = 0; count < CLIENTS; count += 1) {
