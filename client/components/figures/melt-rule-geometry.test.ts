@@ -67,6 +67,13 @@ describe('labels on the melt rule', () => {
     ).toBe(0);
   });
 
+  it('let the text of the band move aside where it fits on neither side of the band', () => {
+    const band = { key: 'band', text: '95 % range 99.96 to 100.04 %', x: 160, hasLeader: false };
+    const [label] = placeLabels([band], 246);
+    expect(label?.left).toBeGreaterThanOrEqual(0);
+    expect(label?.right).toBeLessThanOrEqual(246);
+  });
+
   it('keep clear of each other and of the edges, wherever four marks and a band stand', () => {
     const x = fc.integer({ min: 10, max: 550 });
     fc.assert(

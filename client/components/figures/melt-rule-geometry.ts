@@ -106,7 +106,14 @@ function optionsFor(request: LabelRequest, width: number): PlacedLabel[] {
     options.push(candidate(request, lane, 'start'), candidate(request, lane, 'end'));
   }
   const fitting = options.filter((option) => option.left >= 0 && option.right <= width);
-  return fitting.length > 0 ? fitting : options;
+  if (fitting.length > 0) return fitting;
+  return request.hasLeader ? options : shifted(request, width);
+}
+
+/** A text that points at nothing may move aside until all of it is in the drawing. */
+function shifted(request: LabelRequest, width: number): PlacedLabel[] {
+  const x = Math.max(0, width - request.text.length * GLYPH_WIDTH - GAP);
+  return Array.from({ length: LANES_MOST }, (_, lane) => candidate({ ...request, x }, lane, 'start'));
 }
 
 const laneCost = (label: PlacedLabel) => label.lane * label.lane + (label.anchor === 'end' ? 0.1 : 0);

@@ -49,7 +49,7 @@ function Rate({ rate, hasUnit = false }: RateProps) {
   if (isPrice && !hasUnit) return <span className="fig">{formatAmount(rate.value)}</span>;
   if (isPrice)
     return (
-      <span className="fig">{`US$ ${formatAmount(rate.value)} / ${rate.unit.replace('US$/', '')}`}</span>
+      <span className="fig whitespace-normal">{`US$ ${formatAmount(rate.value)} / ${rate.unit.replace('US$/', '')}`}</span>
     );
   return rate.unit === '' ? <span className="fig">{formatDecimal(rate.value)}</span> : <Quantity {...rate} />;
 }

@@ -1,5 +1,5 @@
 import type { Page } from 'playwright-core';
-import { certificateId, dealCode, lotCode } from './database.ts';
+import { certificateId, dealCode, draftCode, lotCode } from './database.ts';
 
 export type Reader = 'nobody' | 'newcomer' | 'hale' | 'bruna' | 'ilse' | 'wren' | 'desk' | 'admin';
 
@@ -18,7 +18,8 @@ const deal =
   (title: string, rest = '') =>
   async () =>
     `/deals/${await dealCode(title)}${rest}`;
-const draft = (title: string) => async () => `/sell/${await lotCode(title)}`;
+const ownLot = (title: string) => async () => `/sell/${await lotCode(title)}`;
+const draft = (who: string) => async () => `/sell/${await draftCode(who)}`;
 
 const press = (name: string | RegExp) => async (page: Page) => {
   await page.getByRole('button', { name }).first().click();
@@ -148,20 +149,20 @@ const memberPlaces: Place[] = [
   },
   { name: 'account with payouts', route: '/account', reader: 'ilse', address: '/account' },
   { name: 'lots of a seller', route: '/sell', reader: 'ilse', address: '/sell' },
-  { name: 'draft', route: '/sell/:code', reader: 'ilse', address: draft('Silver grain, still drying') },
+  { name: 'draft', route: '/sell/:code', reader: 'ilse', address: draft('ilse') },
   {
     name: 'draft refused',
     route: '/sell/:code',
     reader: 'ilse',
-    address: draft('Silver grain, still drying'),
+    address: draft('ilse'),
     act: pressAndFail('Hand the lot to the desk'),
   },
-  { name: 'own open lot', route: '/sell/:code', reader: 'ilse', address: draft(open) },
+  { name: 'own open lot', route: '/sell/:code', reader: 'ilse', address: ownLot(open) },
   {
     name: 'own returned lot',
     route: '/sell/:code',
     reader: 'wren',
-    address: draft('Gold bar, report to be corrected'),
+    address: ownLot('Gold bar, report to be corrected'),
   },
 ];
 
