@@ -5,6 +5,7 @@ import '#server/models/index.ts';
 import { env } from '#server/env.ts';
 import { logger } from '#server/logger.ts';
 import { errorHandler, nothingHere } from '#server/middleware/error-handler.ts';
+import { methodNotAllowed } from '#server/middleware/method-not-allowed.ts';
 import { securityHeaders } from '#server/middleware/security-headers.ts';
 import { endOldSessions, createSessionMiddleware } from '#server/features/members/session-middleware.ts';
 import { passport } from '#server/features/members/passport.ts';
@@ -37,6 +38,7 @@ export function createApp(): { app: Express; close: () => void } {
     app,
     allRoutes.filter((route) => route.access !== 'signed'),
   );
+  app.use(methodNotAllowed([...healthRoutes, ...allRoutes]));
   app.use('/api', nothingHere);
   serveClient(app);
   app.use(nothingHere);

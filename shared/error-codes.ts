@@ -5,6 +5,8 @@
 export const ERROR_CODES = {
   'invalid-input': { status: 422, title: 'Some fields need another value' },
   'malformed-request': { status: 400, title: 'The request could not be read' },
+  'request-too-large': { status: 413, title: 'The request is too large' },
+  'media-type-unsupported': { status: 415, title: 'The request is not in a form that is read here' },
   'not-found': { status: 404, title: 'There is nothing here' },
   'method-not-allowed': { status: 405, title: 'This cannot be done here' },
   'sign-in-required': { status: 401, title: 'Sign in first' },

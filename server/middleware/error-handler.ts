@@ -36,6 +36,12 @@ export const nothingHere: RequestHandler = () => {
   throw new NotFoundError();
 };
 
+const CODE_OF_STATUS: Readonly<Record<number, ErrorCode>> = {
+  404: 'not-found',
+  413: 'request-too-large',
+  415: 'media-type-unsupported',
+};
+
 function knownRefusal(
   error: unknown,
 ): { code: ErrorCode; detail?: string; errors?: readonly FieldError[] } | null {
@@ -44,20 +50,21 @@ function knownRefusal(
     return error.code === 'LIMIT_FILE_SIZE' ? { code: 'photo-too-large' } : { code: 'malformed-request' };
   }
   if (isDatabaseUnreachable(error)) return { code: 'service-unavailable' };
-  const bodyParser = error as { type?: unknown; status?: unknown };
-  if (
-    typeof bodyParser.type === 'string' &&
-    typeof bodyParser.status === 'number' &&
-    bodyParser.status < 500
-  ) {
-    return { code: 'malformed-request' };
-  }
   if (error instanceof URIError) return { code: 'malformed-request' };
-  return null;
+  // The body parser and the file server refuse with an HTTP status of their own.
+  const { status } = error as { status?: unknown };
+  if (typeof status !== 'number' || status < 400 || status >= 500) return null;
+  return { code: CODE_OF_STATUS[status] ?? 'malformed-request' };
+}
+
+/** The caller went away while an answer was on its way: there is nobody to tell, and nothing is wrong. */
+function hasCallerLeft(error: unknown, res: Response): boolean {
+  return (error as { code?: unknown }).code === 'ERR_STREAM_PREMATURE_CLOSE' && res.destroyed;
 }
 
 /** The one place where errors become answers. What is not a known refusal is logged under a random id and told as nothing more. */
 export const errorHandler: ErrorRequestHandler = (error, req, res, next) => {
+  if (hasCallerLeft(error, res)) return;
   if (res.headersSent) return next(error);
   const refusal = knownRefusal(error);
   if (refusal !== null) {

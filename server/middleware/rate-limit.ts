@@ -8,7 +8,7 @@ const handlers = new Map<RateLimitName, RequestHandler>();
 
 /**
  * One counter a limit and a process. Sign-in counts the address and the account together, so that guessing at one account
- * does not lock the others out of the same office.
+ * does not lock the others out of the same office; a wider count by address alone stands beside it.
  */
 export function rateLimited(name: RateLimitName): RequestHandler {
   const known = handlers.get(name);

@@ -1,6 +1,6 @@
 import type { RequestHandler } from 'express';
 import type { z } from 'zod';
-import { InvalidError, NotFoundError, type FieldError } from '#server/app-error.ts';
+import { AppError, InvalidError, NotFoundError, type FieldError } from '#server/app-error.ts';
 import type { RouteDefinition } from '#server/routing/define-route.ts';
 
 /** RFC 6901 pointer of an issue, so that the client finds the field. */
@@ -21,6 +21,10 @@ export function validate(route: Pick<RouteDefinition, 'params' | 'query' | 'body
   return (req, res, next) => {
     const params = route.params?.safeParse(req.params);
     if (params !== undefined && !params.success) throw new NotFoundError();
+    // Null where no body came, which the schema may allow.
+    if (route.body !== undefined && req.is('application/json') === false) {
+      throw new AppError('media-type-unsupported', 'Send the body as application/json.');
+    }
     const query = route.query?.safeParse(req.query);
     const body = route.body?.safeParse(req.body ?? {});
     const faults = [query, body].flatMap((part) =>

@@ -43,6 +43,8 @@ export type RouteDefinition<P = unknown, Q = unknown, B = unknown> = {
   limit: RateLimitName;
   /** True where the call moves money: the Idempotency-Key header is then required. */
   movesMoney?: boolean;
+  /** True for what a suspended member may still do beside reading: leave. */
+  whileSuspended?: boolean;
   /** Only for signed webhooks and public calculations. */
   csrf?: 'exempt';
   params?: z.ZodType<P>;

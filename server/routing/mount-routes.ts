@@ -15,14 +15,16 @@ const GRANTED: Readonly<Record<Access, readonly string[] | null>> = {
   admin: ['admin'],
 };
 
-function requireAccess(access: Access): RequestHandler {
+function requireAccess({ access, whileSuspended = false }: RouteDefinition): RequestHandler {
   const roles = GRANTED[access];
   return (req, _res, next) => {
     if (roles === null) return next();
     const actor = req.user as Actor | undefined;
     if (actor === undefined) throw new AppError('sign-in-required');
     if (!roles.includes(actor.role)) throw new ForbiddenError();
-    if (actor.suspendedAt !== null && req.method !== 'GET') throw new ForbiddenError('member-suspended');
+    if (actor.suspendedAt !== null && req.method !== 'GET' && !whileSuspended) {
+      throw new ForbiddenError('member-suspended');
+    }
     next();
   };
 }
@@ -45,10 +47,11 @@ function handlerOf(route: RouteDefinition): RequestHandler {
   };
 }
 
-/** Every route reads as one list: access → rate limit → CSRF → idempotency key → validation → handler. */
+/** Every route reads as one list: access → rate limit → CSRF → upload or raw body → validation → idempotency key → handler. */
 export function mountRoutes(app: Express, routes: readonly RouteDefinition[]): void {
   for (const route of routes) {
-    const chain: RequestHandler[] = [requireAccess(route.access), rateLimited(route.limit)];
+    const chain: RequestHandler[] = [requireAccess(route), rateLimited(route.limit)];
+    if (route.limit === 'sign-in') chain.push(rateLimited('sign-in-address'));
     if (route.method !== 'get' && route.csrf !== 'exempt') chain.push(requireCsrfToken);
     chain.push(...(route.before ?? []), validate(route));
     if (route.movesMoney === true) chain.push(readIdempotencyKey(route));

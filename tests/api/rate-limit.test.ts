@@ -9,6 +9,7 @@ import { rateLimited } from '#server/middleware/rate-limit.ts';
 const app = express();
 app.use(express.json());
 app.post('/sign-in', rateLimited('sign-in'), (_req, res) => void res.json({}));
+app.post('/any-account', rateLimited('sign-in-address'), (_req, res) => void res.json({}));
 app.use(errorHandler);
 const allowed = RATE_LIMITS['sign-in'].requestsMax * env.RATE_LIMIT_FACTOR;
 const tryIt = (email: string) => supertest(app).post('/sign-in').send({ email });
@@ -22,4 +23,19 @@ describe('the limit on sign-in', () => {
     expect(Number.parseInt(String(refused.headers['retry-after']), 10)).toBeGreaterThan(0);
     await tryIt('other@scruple.example').expect(200);
   }, 60_000);
+
+  it('counts the tries of an address at many accounts as well', async () => {
+    const most = RATE_LIMITS['sign-in-address'].requestsMax * env.RATE_LIMIT_FACTOR;
+    const attempt = (index: number) =>
+      supertest(app)
+        .post('/any-account')
+        .send({ email: `${index}@scruple.example` });
+    for (let done = 0; done < most; done += 50) {
+      const some = Array.from({ length: Math.min(50, most - done) }, (_, index) => attempt(done + index));
+      const answers = await Promise.all(some);
+      expect(answers.every(({ status }) => status === 200)).toBe(true);
+    }
+    const refused = await attempt(most);
+    expect([refused.status, refused.body.code]).toEqual([429, 'too-many-requests']);
+  }, 120_000);
 });

@@ -117,6 +117,31 @@ describe('the route registry', () => {
     expect(answer.body.code).toBe('malformed-request');
   });
 
+  it('says which methods an address takes, when asked by another', async () => {
+    const { agent } = await app.visitor();
+    const answer = await agent.patch('/api/v1/session').send({}).expect(405);
+    expect(answer.body).toMatchObject({ code: 'method-not-allowed', status: 405 });
+    expect(answer.headers['allow']?.split(', ').sort()).toEqual(['DELETE', 'GET', 'POST']);
+    await agent.put('/healthz').expect(405);
+    await agent.get('/api/v1/webhooks/stripe').expect(405);
+  });
+
+  it('refuses a body that is too large or no JSON by the status that says so', async () => {
+    const { agent } = await app.visitor();
+    const huge = await agent.post('/api/v1/valuations').send({ mass: 'x'.repeat(300_000) });
+    expect([huge.status, huge.body.code]).toEqual([413, 'request-too-large']);
+    const xml = await agent.post('/api/v1/valuations').set('Content-Type', 'application/xml').send('<mass/>');
+    expect([xml.status, xml.body.code]).toEqual([415, 'media-type-unsupported']);
+    const packed = await agent
+      .post('/api/v1/valuations')
+      .set('Content-Type', 'application/json')
+      .set('Content-Encoding', 'unheard-of')
+      .send('{}');
+    expect([packed.status, packed.body.code]).toEqual([415, 'media-type-unsupported']);
+    const webhook = await agent.post('/api/v1/webhooks/stripe').send({ id: 'x'.repeat(1_100_000) });
+    expect([webhook.status, webhook.body.code]).toEqual([413, 'request-too-large']);
+  });
+
   it('sends the security headers, and no word of the framework', async () => {
     const answer = await (await app.visitor()).get('/api/v1/session').expect(200);
     expect(answer.headers['content-security-policy']).toContain("script-src 'self'");

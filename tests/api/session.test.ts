@@ -176,7 +176,7 @@ describe('unsafe requests', () => {
     await visitor.put('/api/v1/me/profile', body).expect(200);
   });
 
-  it('are refused for a suspended member, who may still read', async () => {
+  it('are refused for a suspended member, who may still read and sign out', async () => {
     const member = await buildMember();
     const visitor = await app.signIn(member);
     await sequelize.query('UPDATE members SET suspended_at = NOW(3) WHERE id = ?', {
@@ -186,6 +186,9 @@ describe('unsafe requests', () => {
     const answer = await visitor.put('/api/v1/me/profile', body).expect(403);
     expect(answer.body.code).toBe('member-suspended');
     await visitor.get('/api/v1/session').expect(200);
+    await visitor.delete('/api/v1/session').expect(204);
+    const after = await visitor.get('/api/v1/session').expect(200);
+    expect(after.body.member).toBeNull();
   });
 });
 

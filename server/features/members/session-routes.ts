@@ -98,6 +98,7 @@ export const sessionRoutes: RouteDefinition[] = [
     summary: 'Sign out',
     access: 'member',
     limit: 'write',
+    whileSuspended: true,
     handle: ({ req, res }) =>
       new Promise<void>((resolve, reject) => {
         req.session.destroy((error: unknown) => {
