@@ -42,6 +42,17 @@ const schema = z.object({
 
 export type Env = Readonly<z.infer<typeof schema>>;
 
+/** The word that stands for every secret in `.env.example`, also inside an address. */
+const SAMPLE_WORD = 'change-me';
+const ADDRESSES_AND_KEYS = [
+  'DATABASE_URL',
+  'DATABASE_OWNER_URL',
+  'QUOTES_API_KEY',
+  'SMTP_URL',
+  'CARRIER_API_KEY',
+  'S3_SECRET_ACCESS_KEY',
+] as const;
+
 function isLoopback(address: string): boolean {
   return /\/\/([^@/]*@)?(localhost|127\.|\[::1\])/.test(address);
 }
@@ -51,6 +62,9 @@ function productionFaults(env: Env): string[] {
   const faults: string[] = [];
   for (const name of ['SESSION_SECRET', 'STRIPE_SECRET_KEY', 'STRIPE_WEBHOOK_SECRET'] as const) {
     if (SAMPLE_SECRETS.has(env[name])) faults.push(`${name} is a sample value`);
+  }
+  for (const name of ADDRESSES_AND_KEYS) {
+    if (env[name]?.includes(SAMPLE_WORD)) faults.push(`${name} holds a sample value`);
   }
   if (env.STRIPE_API_BASE !== '') faults.push('STRIPE_API_BASE points the payment SDK at a stand-in');
   if (env.STRIPE_SECRET_KEY.startsWith('sk_test_')) faults.push('STRIPE_SECRET_KEY is a test key');

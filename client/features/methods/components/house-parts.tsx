@@ -65,8 +65,9 @@ export function QuotesPart() {
       </Prose>
       <Prose>
         A value that jumps is kept apart until the next {QUOTE_CONFIRM_POLLS} answers confirm it within{' '}
-        {formatPercent(QUOTE_CONFIRM_PERCENT)}; after {QUOTE_ALARM_POLLS} answers without agreement somebody
-        is called. Values of nothing, below nothing or in another currency are refused.
+        {formatPercent(QUOTE_CONFIRM_PERCENT)}; after {QUOTE_ALARM_POLLS} answers without agreement it stands
+        in the audit trail, where an admin reads it. Values of nothing, below nothing or in another currency
+        are refused.
       </Prose>
       <FigureTable
         caption="How far a quote may move before it has to be confirmed"
@@ -128,7 +129,11 @@ const deadlines = [
     silence: 'cancelled; everything goes back to the buyer',
   },
   { what: 'Arrive', time: `${ARRIVE_DAYS} days`, silence: 'the buyer can contest' },
-  { what: 'Inspect', time: `${INSPECT_DAYS} days`, silence: 'the money stays held until somebody decides' },
+  {
+    what: 'Inspect',
+    time: `${INSPECT_DAYS} days`,
+    silence: 'the money stays held; the desk can take up the deal',
+  },
   {
     what: 'Rule on a contest',
     time: `${CONTESTED_DESK_DAYS} days`,
@@ -141,12 +146,12 @@ export function DealPart() {
     <MethodPart
       id="deal"
       title="Weighing on arrival, and deadlines"
-      source="comparison of two independent values, GUM (JCGM 100:2008) 5.1.2; the deadlines are rules of this house."
+      source="comparing two displays by their steps is common practice; the deadlines are rules of this house."
     >
       <Prose>
-        The received mass agrees with the stated one when their difference is no larger than the expanded
-        uncertainty of both weighings together, each balance with its readability as a rectangle, k = 2. The
-        buyer’s readability is one unit of the last digit typed.
+        The received mass agrees with the stated one when their difference is no larger than one step of the
+        display of each balance together. The seller’s step is the stated readability, or one unit of the last
+        digit where none was given; the buyer’s is one unit of the last digit typed.
       </Prose>
       <FigureTable
         caption="Deadlines of a deal"
