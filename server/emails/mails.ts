@@ -9,6 +9,7 @@ import { dealFundedSeller } from './deal-funded-seller.ts';
 import { dealLapsed } from './deal-lapsed.ts';
 import { dealRefunded } from './deal-refunded.ts';
 import { dealRuled } from './deal-ruled.ts';
+import { dealTakenUp } from './deal-taken-up.ts';
 import { latePaymentRefunded } from './late-payment-refunded.ts';
 import { lotExamined } from './lot-examined.ts';
 import { lotOpened } from './lot-opened.ts';
@@ -34,6 +35,7 @@ export const MAILS = {
   'deal-lapsed': dealLapsed,
   'deal-refunded': dealRefunded,
   'deal-ruled': dealRuled,
+  'deal-taken-up': dealTakenUp,
   'late-payment-refunded': latePaymentRefunded,
   'lot-examined': lotExamined,
   'lot-opened': lotOpened,

@@ -27,6 +27,8 @@ export const parcelDeliveredBuyer = defineMail({
       { label: 'Inspect by', value: momentText(inspectBy, timeZone) },
     ],
     action: { label: 'Record the mass', path: dealPath(dealCode) },
-    closing: ['The money stays in escrow until you accept, or until the desk has ruled on what you contest.'],
+    closing: [
+      'The money stays in escrow until you accept, or until the desk has ruled on what you contest. If you do neither in time, the desk can take up the deal and rule.',
+    ],
   }),
 });

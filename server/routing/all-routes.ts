@@ -13,6 +13,7 @@ import { feeRoutes } from '#server/features/fees/fee-routes.ts';
 import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
 import { lotRoutes } from '#server/features/lots/lot-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
+import { receiptRoutes } from '#server/features/receipts/receipt-routes.ts';
 import { registerRoutes } from '#server/features/register/register-routes.ts';
 import { valuationRoutes } from '#server/features/valuations/valuation-routes.ts';
 import { describeApi } from './api-description.ts';
@@ -22,6 +23,7 @@ const productRoutes: readonly RouteDefinition[] = [
   ...sessionRoutes,
   ...quoteRoutes,
   ...dealRoutes,
+  ...receiptRoutes,
   ...deskDealRoutes,
   ...laboratoryRoutes,
   ...caseRoutes,

@@ -53,7 +53,14 @@ export const receiptRequest = z.object({
   photoFileId: z.uuid().nullable().default(null),
 });
 
+/** What the upload of a photo of the weighing answers; the id goes into the receipt. */
+export const receiptPhotoAnswer = z.object({ fileId: z.uuid() });
+export type ReceiptPhotoAnswer = z.infer<typeof receiptPhotoAnswer>;
+
 export const CONTEST_REASONS = ['not_arrived', 'wrong_mass', 'wrong_metal', 'damaged'] as const;
+/** Why the desk has a deal: what a buyer can say, and that nobody has said anything in time. */
+export const CONTEST_KINDS = [...CONTEST_REASONS, 'not_answered'] as const;
+export type ContestKind = (typeof CONTEST_KINDS)[number];
 export const contestRequest = z.object({
   reason: z.enum(CONTEST_REASONS, { error: 'Choose what is wrong' }),
   note: line(10, 1000, 'Say what is wrong in a sentence'),
@@ -65,6 +72,12 @@ export const rulingRequest = z.object({
   reason: line(10, 1000, 'Give both sides the reason in a sentence'),
 });
 export type RulingRequest = z.infer<typeof rulingRequest>;
+
+/** Why the desk takes up a deal that the buyer has left unanswered. */
+export const takeUpRequest = z.object({
+  reason: line(10, 1000, 'Give both sides the reason in a sentence'),
+});
+export type TakeUpRequest = z.infer<typeof takeUpRequest>;
 
 export const startPaymentAnswer = z.object({ url: z.url(), expiresAt: instant });
 
@@ -101,6 +114,8 @@ export const dealEventAnswer = z.object({
 });
 export type DealEventAnswer = z.infer<typeof dealEventAnswer>;
 
+const dealParty = z.object({ displayName: z.string(), region: z.string() });
+
 export const dealAnswer = z.object({
   code: dealCode,
   state: z.enum(DEAL_STATE_VALUES),
@@ -113,8 +128,12 @@ export const dealAnswer = z.object({
     thumb: z.string().nullable(),
     region: z.string(),
     gross: quantitySchema,
+    /** One step of the seller's balance, where it was given. */
+    readability: quantitySchema.nullable(),
   }),
-  counterparty: z.object({ displayName: z.string(), region: z.string() }),
+  counterparty: dealParty,
+  buyer: dealParty,
+  seller: dealParty,
   price: moneySchema,
   shipping: moneySchema,
   total: moneySchema,
@@ -153,9 +172,12 @@ export const dealAnswer = z.object({
       differenceGrams: decimalString,
       isWithinScales: z.boolean(),
       at: instant,
+      /** The buyer's photo of the weighing, where there is one; its sizes as of a lot's photo. */
+      photoUrl: z.string().nullable(),
+      photoThumb: z.string().nullable(),
     })
     .nullable(),
-  contest: z.object({ reason: z.enum(CONTEST_REASONS), note: z.string(), at: instant }).nullable(),
+  contest: z.object({ reason: z.enum(CONTEST_KINDS), note: z.string(), at: instant }).nullable(),
   payout: z
     .object({
       state: z.enum(['due', 'transferred', 'sent', 'paid', 'failed']),
@@ -187,6 +209,8 @@ export const dealAnswer = z.object({
     accept: z.boolean(),
     contest: z.boolean(),
     rule: z.boolean(),
+    /** The desk: the buyer's days to inspect are over and nothing was said. */
+    takeUp: z.boolean(),
     freeze: z.boolean(),
     unfreeze: z.boolean(),
   }),
@@ -204,6 +228,8 @@ export const dealRow = z.object({
   total: moneySchema,
   due: dealAnswer.shape.due,
   isMyTurn: z.boolean(),
+  /** Since when it is over: the end, or the day it was paid out. Null while it runs. */
+  closedAt: instant.nullable(),
   updatedAt: instant,
 });
 export type DealRow = z.infer<typeof dealRow>;

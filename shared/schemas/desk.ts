@@ -214,6 +214,17 @@ export const deskDealsAnswer = z.object({
       isOwn: z.boolean(),
     }),
   ),
+  /** Delivered, and the buyer's days to inspect have passed without a word; the longest first. */
+  overdue: z.array(
+    z.object({
+      code: z.string(),
+      lotTitle: z.string(),
+      deliveredAt: instant,
+      inspectBy: instant,
+      total: z.string(),
+      isOwn: z.boolean(),
+    }),
+  ),
 });
 export type DeskDealsAnswer = z.infer<typeof deskDealsAnswer>;
 

@@ -5,7 +5,7 @@ import { databaseNow, withTransaction, type Unit } from '#server/database/transa
 import { acceptDeal } from '#server/features/deals/accept-deal.ts';
 import { contestDeal } from '#server/features/deals/contest-deal.ts';
 import { purchaseLot } from '#server/features/deals/purchase-lot.ts';
-import { recordReceipt } from '#server/features/deals/record-receipt.ts';
+import { recordReceipt } from '#server/features/receipts/record-receipt.ts';
 import { shipDeal } from '#server/features/deals/ship-deal.ts';
 import { recordTracking } from '#server/features/parcels/record-tracking.ts';
 import { fundDeal } from '#server/features/payments/fund-deal.ts';

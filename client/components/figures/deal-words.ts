@@ -1,5 +1,5 @@
 import { DEAL_STATE_LABELS } from '#shared/deal-states.ts';
-import type { CONTEST_REASONS, DealAnswer, DealEventAnswer } from '#shared/schemas/deals.ts';
+import type { CONTEST_REASONS, ContestKind, DealAnswer, DealEventAnswer } from '#shared/schemas/deals.ts';
 
 export type ContestReason = (typeof CONTEST_REASONS)[number];
 export type Side = DealAnswer['side'];
@@ -30,6 +30,19 @@ export const contestReasons: Readonly<Record<ContestReason, { label: string; hin
   },
   damaged: { label: 'It is damaged', hint: 'The seal was broken, or something is missing from the parcel.' },
 };
+
+/** What stands against a deal, as a heading. */
+export function contestWord(kind: ContestKind): string {
+  if (kind === 'not_answered') return 'Taken up by the desk: the buyer has not answered in time';
+  return `Contested: ${contestReasons[kind].label.toLowerCase()}`;
+}
+
+/** Whether two weighings may be of one piece. */
+export function scalesWord(isWithinScales: boolean): string {
+  return isWithinScales
+    ? 'The two weighings agree: no further apart than one step of each balance together.'
+    : 'The two weighings differ by more than one step of each balance together.';
+}
 
 const stateWords: Partial<Record<DealAnswer['state'], string>> = {
   agreed: 'Agreed, not paid',
@@ -81,7 +94,12 @@ export function refundWord(state: Refund['state']): string {
   return refundWords[state];
 }
 
-/** The other side, named as in a sentence: 'Ines Marlow, Harrow Vale'. */
+/** A side, named as in a sentence: 'Ines Marlow, Harrow Vale'. */
+export function partyText({ displayName, region }: DealAnswer['counterparty']): string {
+  return `${displayName}, ${region}`;
+}
+
+/** The other side, named as in a sentence. */
 export function counterpartyText(deal: Pick<DealAnswer, 'counterparty'>): string {
-  return `${deal.counterparty.displayName}, ${deal.counterparty.region}`;
+  return partyText(deal.counterparty);
 }

@@ -12,7 +12,7 @@ const sheet: SettlementSheet = {
   audience: 'buyer',
   quotes: [
     {
-      id: '4411',
+      id: '0193ad1c-77d0-7e0b-9f5a-1c2ba87298d8',
       metal: 'Au',
       usdPerTroyOunce: '4182.40',
       at: '2026-12-01T14:02:00Z',
@@ -138,7 +138,7 @@ describe('SettlementSheetView', () => {
   it('names its quote, its range, its price in % of melt and what was assumed', () => {
     show();
     expect(screen.getByText(/Gold at/)).toHaveTextContent(
-      'Gold at US$ 4,182.40 per oz t fine, quote of 1 Dec 2026, 14:02 UTC, quote service (no. 4411)',
+      'Gold at US$ 4,182.40 per oz t fine, quote of 1 Dec 2026, 14:02 UTC, quote service, no. a87298d8',
     );
     expect(screen.getByText(/95 % range/)).toHaveTextContent(
       '95 % range US$ 4,160 to 4,180 · price at 98.20 % of melt',

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import type { QuoteRef, SettlementSheet, SheetMoment } from '#shared/settlement/sheet-types.ts';
 import { METAL_NAMES } from '#shared/metals.ts';
+import { shortQuoteNumber } from '#shared/quote-number.ts';
 import { formatMoment, formatPercent, THIN } from '../../lib/format.ts';
 import { useReader } from '../../lib/reader-context.ts';
 import { Button } from '../ui/button.tsx';
@@ -65,7 +66,7 @@ export function SettlementSheetView({ sheet, title = 'Settlement sheet' }: Settl
           ))}
         </tbody>
       </table>
-      <SheetNotes sheet={sheet} />
+      <SheetNotes sheet={sheet} isOpen={allOpen} />
     </section>
   );
 }
@@ -79,7 +80,7 @@ function Spread({ percent }: { percent: string }) {
   );
 }
 
-function SheetNotes({ sheet }: { sheet: SettlementSheet }) {
+function SheetNotes({ sheet, isOpen }: { sheet: SettlementSheet; isOpen: boolean }) {
   return (
     <div className="flex flex-col gap-1.5 px-(--pad) py-3 text-note text-ink-2">
       <p>
@@ -92,7 +93,7 @@ function SheetNotes({ sheet }: { sheet: SettlementSheet }) {
         )}
       </p>
       {sheet.quotes.map((quote) => (
-        <QuoteLine key={quote.metal} quote={quote} />
+        <QuoteLine key={quote.metal} quote={quote} isOpen={isOpen} />
       ))}
       {sheet.assumed.length > 0 && (
         <div>
@@ -114,13 +115,21 @@ function assumedName(field: string): string {
   return field.endsWith('/readability') ? 'Readability of the balance:' : 'Expanded uncertainty:';
 }
 
-function QuoteLine({ quote }: { quote: QuoteRef }) {
+/** The whole number of a quote is shown with the working; else its end tells it apart. */
+function QuoteLine({ quote, isOpen }: { quote: QuoteRef; isOpen: boolean }) {
   const { timeZone } = useReader();
   return (
     <p>
       {METAL_NAMES[quote.metal]} at <Money value={quote.usdPerTroyOunce} /> per oz t fine
       {quote.at ? `, quote of ${formatMoment(quote.at, timeZone)}` : ''}, {quote.source}
-      {quote.id && ` (no. ${quote.id})`}
+      {quote.id && (
+        <>
+          {', no. '}
+          <span title={quote.id} className="fig [overflow-wrap:anywhere]">
+            {isOpen ? quote.id : shortQuoteNumber(quote.id)}
+          </span>
+        </>
+      )}
     </p>
   );
 }

@@ -11,6 +11,7 @@ const ORDER: readonly DealAct[] = [
   'recordReceipt',
   'accept',
   'rule',
+  'takeUp',
   'contest',
   'unfreeze',
   'freeze',
@@ -36,6 +37,8 @@ export function actText(act: DealAct, deal: DealAnswer): string {
       return `Accept: ${formatMoney(deal.held.amount)} to the seller`;
     case 'rule':
       return 'Rule on the deal';
+    case 'takeUp':
+      return 'Take up the deal';
     case 'contest':
       return 'Contest';
     case 'unfreeze':

@@ -1,7 +1,7 @@
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { ruleByFrom } from './deadlines.ts';
-import { isOverdueOrLost, isUnsignedDelivery } from './deal-policy.ts';
+import { isInspectionOver, isOverdueOrLost, isUnsignedDelivery } from './deal-policy.ts';
 
 export type Due = NonNullable<DealAnswer['due']>;
 
@@ -55,7 +55,9 @@ function dueOfState(deal: Deal, now: Date): (Omit<Due, 'at'> & { at: Date | null
         who: 'buyer',
         act: (deal.receipt ?? null) === null ? 'Weigh it and record the mass' : 'Accept or contest',
         at: deal.inspectBy,
-        silence: 'Nothing is accepted by silence: the money stays held until the buyer accepts or contests.',
+        silence: isInspectionOver(deal, now)
+          ? 'The time to inspect is over. The money stays held until the buyer accepts or contests, or the desk takes up the deal and rules.'
+          : 'Nothing is accepted by silence: the money stays held, and from then on the desk can take up the deal and rule.',
       };
     case 'contested':
       return {

@@ -238,6 +238,23 @@ export async function mailDealContested(
   }
 }
 
+/** To be called after the deal has been moved to contested. */
+export async function mailDealTakenUp(deal: Deal, reason: string, unit: Unit): Promise<void> {
+  const subject = await subjectOf(deal, unit);
+  const decideBy = ruleByFrom(deal.contestedAt ?? unit.now).toISOString();
+  for (const side of SIDES) {
+    await enqueueMail(
+      {
+        mail: 'deal-taken-up',
+        memberId: memberOf(deal, side),
+        uniqueKey: `deal-taken-up:${deal.id}:${side}`,
+        input: { ...subject, side, reason, decideBy },
+      },
+      unit,
+    );
+  }
+}
+
 export async function mailDealRuled(
   deal: Deal,
   { ruling, reason }: { ruling: 'refund' | 'release'; reason: string },

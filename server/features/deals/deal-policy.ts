@@ -8,7 +8,7 @@ export type DealSide = 'buyer' | 'seller' | 'desk';
 /** A deal with what the rules look at. */
 export type JudgedDeal = Pick<
   Deal,
-  'buyerId' | 'sellerId' | 'state' | 'fundBy' | 'shipBy' | 'arriveBy' | 'frozenAt' | 'fundedAt'
+  'buyerId' | 'sellerId' | 'state' | 'fundBy' | 'shipBy' | 'arriveBy' | 'inspectBy' | 'frozenAt' | 'fundedAt'
 > & { parcel?: Pick<Parcel, 'trackerStatus' | 'deliveredAt' | 'isSigned'> | null; receipt?: unknown };
 
 /** How somebody stands to a deal; null: it is not visible. A side that works at the desk stays a side. */
@@ -31,6 +31,11 @@ export function isOverdueOrLost(deal: JudgedDeal, now: Date): boolean {
   return isPast(deal.arriveBy, now) || ['lost', 'returned'].includes(deal.parcel?.trackerStatus ?? '');
 }
 
+/** The buyer's days to inspect have passed without a word. */
+export function isInspectionOver(deal: JudgedDeal, now: Date): boolean {
+  return deal.state === 'delivered' && isPast(deal.inspectBy, now);
+}
+
 /** The carrier says delivered, but nobody signed: it waits for the buyer's word. */
 export function isUnsignedDelivery(deal: JudgedDeal): boolean {
   const parcel = deal.parcel ?? null;
@@ -51,6 +56,7 @@ export type DealAction =
   | 'accept'
   | 'contest'
   | 'rule'
+  | 'takeUp'
   | 'freeze'
   | 'unfreeze';
 
@@ -72,6 +78,7 @@ const SELLER_RULES: Partial<Record<DealAction, Rule>> = {
 
 const DESK_RULES: Partial<Record<DealAction, Rule>> = {
   rule: (deal) => deal.state === 'contested' && deal.frozenAt === null,
+  takeUp: (deal, now) => isInspectionOver(deal, now) && deal.frozenAt === null,
   freeze: (deal) => deal.frozenAt === null && HOLDING_DEAL_STATES.includes(deal.state),
   unfreeze: (deal) => deal.frozenAt !== null && !isDealEnded(deal.state),
 };

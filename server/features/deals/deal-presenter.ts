@@ -2,12 +2,13 @@ import { HOLDING_DEAL_STATES, isDealEnded } from '#shared/deal-states.ts';
 import { dec, plain } from '#shared/decimal.ts';
 import { minorToAmount } from '#shared/money.ts';
 import type { MoneyAnswer } from '#shared/schemas/common.ts';
-import type { DealAnswer, DealRow, DealsAnswer } from '#shared/schemas/deals.ts';
+import type { ContestKind, DealAnswer, DealRow, DealsAnswer } from '#shared/schemas/deals.ts';
 import type { DeskDealsAnswer } from '#shared/schemas/desk.ts';
 import { NotFoundError } from '#server/app-error.ts';
+import { compareWithLot } from '#server/features/receipts/compare-with-lot.ts';
 import type { Deal } from '#server/models/deal.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { CONTEST_REASON_LABELS, type ContestReason } from './contest-reasons.ts';
+import { CONTEST_REASON_LABELS } from './contest-reasons.ts';
 import { ruleByFrom } from './deadlines.ts';
 import { dueOf } from './deal-due.ts';
 import { eventText } from './deal-event-text.ts';
@@ -15,7 +16,6 @@ import { netMinorOf } from './deal-mails.ts';
 import { sheetFor } from './deal-sheets.ts';
 import { canDo, isOwnCase, sideOf, type DealSide } from './deal-policy.ts';
 import type { DealListEntry, DealView } from './deal-queries.ts';
-import { compareReceivedMass } from './received-mass.ts';
 
 type Who = Pick<Actor, 'id' | 'role'>;
 
@@ -67,7 +67,15 @@ function presentReceipt(deal: DealView['deal']): DealAnswer['receipt'] {
   const receipt = deal.receipt ?? null;
   if (receipt === null) return null;
   const mass = { value: receipt.massValue, unit: receipt.massUnit };
-  return { mass, ...compareReceivedMass(deal.lot, mass), at: receipt.recordedAt.toISOString() };
+  const photo = (size: number) =>
+    receipt.photoFileId === null ? null : `/api/v1/deals/${deal.code}/receipt-photo/${size}`;
+  return {
+    mass,
+    ...compareWithLot(deal.lot, mass),
+    at: receipt.recordedAt.toISOString(),
+    photoUrl: photo(2000),
+    photoThumb: photo(240),
+  };
 }
 
 function presentOutcome(deal: Deal): Pick<DealAnswer, 'payout' | 'refund' | 'contest' | 'endReason'> {
@@ -89,7 +97,7 @@ function presentOutcome(deal: Deal): Pick<DealAnswer, 'payout' | 'refund' | 'con
       contestedAt === null
         ? null
         : {
-            reason: deal.contestReason as ContestReason,
+            reason: deal.contestReason as ContestKind,
             note: deal.contestNote ?? '',
             at: contestedAt.toISOString(),
           },
@@ -107,6 +115,7 @@ function presentCan(actor: Who, deal: Deal, now: Date): DealAnswer['can'] {
     accept: can('accept'),
     contest: can('contest'),
     rule: can('rule'),
+    takeUp: can('takeUp'),
     freeze: can('freeze'),
     unfreeze: can('unfreeze'),
   };
@@ -121,7 +130,15 @@ function presentLot({ deal, thumbPhotoId }: DealListEntry): DealAnswer['lot'] {
     thumb: thumbUrl(thumbPhotoId),
     region: lot.region,
     gross: { value: lot.grossValue ?? '', unit: lot.grossUnit ?? '' },
+    readability:
+      lot.readabilityValue === null || lot.readabilityUnit === null
+        ? null
+        : { value: lot.readabilityValue, unit: lot.readabilityUnit },
   };
+}
+
+function presentParty({ displayName, region }: DealView['deal']['buyer']): DealAnswer['counterparty'] {
+  return { displayName, region };
 }
 
 /** The document names the seller's address: the buyer gets it once his money is held. */
@@ -139,14 +156,15 @@ export function presentDeal(view: DealView, actor: Who, now: Date): DealAnswer {
   const { deal } = view;
   const side = sideOf(actor, deal);
   if (side === null) throw new NotFoundError();
-  const counterparty = side === 'buyer' ? deal.seller : deal.buyer;
   const provisionalSheet = sheetFor(side, view.provisional);
   return {
     code: deal.code,
     state: deal.state,
     side,
     lot: presentLot(view),
-    counterparty: { displayName: counterparty.displayName, region: counterparty.region },
+    counterparty: presentParty(side === 'buyer' ? deal.seller : deal.buyer),
+    buyer: presentParty(deal.buyer),
+    seller: presentParty(deal.seller),
     price: usd(deal.priceMinor),
     shipping: usd(deal.shippingMinor),
     total: usd(deal.totalMinor),
@@ -195,6 +213,7 @@ function presentRow(entry: DealListEntry, actor: Who, now: Date): DealRow {
     total: usd(deal.totalMinor),
     due,
     isMyTurn: due?.who === side && deal.frozenAt === null,
+    closedAt: isClosed(entry) ? iso(deal.endedAt ?? deal.paidOutAt) : null,
     updatedAt: deal.updatedAt.toISOString(),
   };
 }
@@ -217,12 +236,24 @@ export function presentDeals(entries: readonly DealListEntry[], actor: Who, now:
   };
 }
 
-export function presentContestedDeals(deals: readonly DealView['deal'][], actor: Who): DeskDealsAnswer {
+/** What waits for a ruling, and what the desk may take up because the buyer has let his time pass. */
+export function presentDeskDeals(
+  { contested: deals, overdue }: { contested: DealView['deal'][]; overdue: DealView['deal'][] },
+  actor: Who,
+): DeskDealsAnswer {
   return {
+    overdue: overdue.map((deal) => ({
+      code: deal.code,
+      lotTitle: deal.lot.title ?? '',
+      deliveredAt: (deal.deliveredAt ?? deal.updatedAt).toISOString(),
+      inspectBy: (deal.inspectBy ?? deal.updatedAt).toISOString(),
+      total: minorToAmount(deal.totalMinor),
+      isOwn: isOwnCase(actor, deal),
+    })),
     contested: deals.map((deal) => ({
       code: deal.code,
       lotTitle: deal.lot.title ?? '',
-      reason: CONTEST_REASON_LABELS[deal.contestReason as ContestReason] ?? '',
+      reason: CONTEST_REASON_LABELS[deal.contestReason as ContestKind] ?? '',
       contestedAt: (deal.contestedAt ?? deal.updatedAt).toISOString(),
       decideBy: ruleByFrom(deal.contestedAt ?? deal.updatedAt).toISOString(),
       total: minorToAmount(deal.totalMinor),

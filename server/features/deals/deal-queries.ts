@@ -128,6 +128,18 @@ export async function listContestedDeals(): Promise<DealView['deal'][]> {
   })) as DealView['deal'][];
 }
 
+/** Delivered deals whose time to inspect has passed without an answer, the longest first. */
+export async function listOverdueInspections(now: Date): Promise<DealView['deal'][]> {
+  return (await Deal.findAll({
+    where: { state: 'delivered', frozenAt: null, inspectBy: { [Op.lte]: now } },
+    include: PARTIES,
+    order: [
+      ['inspectBy', 'ASC'],
+      ['id', 'ASC'],
+    ],
+  })) as DealView['deal'][];
+}
+
 /** Funded deals whose shipping deadline has passed, for the job that cancels them. */
 export async function findUnshippedDeals(now: Date): Promise<{ id: string; lotId: string }[]> {
   return Deal.findAll({

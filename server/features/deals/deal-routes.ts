@@ -5,7 +5,6 @@ import {
   dealParams,
   dealsAnswer,
   purchaseRequest,
-  receiptRequest,
   shipRequest,
 } from '#shared/schemas/deals.ts';
 import { lotParams } from '#shared/schemas/lots.ts';
@@ -25,7 +24,6 @@ import { presentDeals } from './deal-presenter.ts';
 import { findDealIds, listDealsOf, loadDealView } from './deal-queries.ts';
 import { sheetFor } from './deal-sheets.ts';
 import { purchaseLot } from './purchase-lot.ts';
-import { recordReceipt } from './record-receipt.ts';
 import { shipDeal } from './ship-deal.ts';
 
 type DealParams = z.infer<typeof dealParams>;
@@ -135,23 +133,6 @@ const actRoutes: RouteDefinition[] = [
     answer: dealAnswer,
     handle: async ({ params, actor, res }) => {
       res.json(await changeDeal(params.code, actor, (dealId, unit) => confirmDelivery(dealId, unit, actor)));
-    },
-  }),
-  defineRoute<DealParams, unknown, z.infer<typeof receiptRequest>>({
-    method: 'post',
-    path: '/api/v1/deals/:code/receipt',
-    summary: 'The buyer records the received mass',
-    access: 'member',
-    limit: 'write',
-    params: dealParams,
-    body: receiptRequest,
-    answer: dealAnswer,
-    handle: async ({ params, body, actor, res }) => {
-      res.json(
-        await changeDeal(params.code, actor, (dealId, unit) =>
-          recordReceipt({ ...body, dealId }, unit, actor),
-        ),
-      );
     },
   }),
   defineRoute<DealParams>({

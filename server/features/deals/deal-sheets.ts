@@ -90,7 +90,18 @@ export async function storeFinalSheets(dealId: string, unit: Unit): Promise<Deal
   return storeDealSheets(dealId, 'final', provisional.input as RefinedSheetInput, unit);
 }
 
-/** The seller's sheet carries the commission, which is not the buyer's business. */
+/** The same sheet for a reader who is neither side: nothing in it speaks to “you”. */
+function toldByTheHouse(sheet: SettlementSheet): SettlementSheet {
+  return {
+    ...sheet,
+    lines: sheet.lines.map((line) =>
+      line.kind === 'total' ? { ...line, label: 'Goes to the seller' } : line,
+    ),
+  };
+}
+
+/** The seller's sheet carries the commission, which is not the buyer's business; the desk reads it without its “you”. */
 export function sheetFor(side: DealSide, stored: DealSheet): SettlementSheet {
-  return (side === 'buyer' ? stored.buyerSheet : stored.sellerSheet) as SettlementSheet;
+  const sheet = (side === 'buyer' ? stored.buyerSheet : stored.sellerSheet) as SettlementSheet;
+  return side === 'desk' ? toldByTheHouse(sheet) : sheet;
 }

@@ -1,14 +1,16 @@
 import type { z } from 'zod';
-import { dealAnswer, dealParams, rulingRequest } from '#shared/schemas/deals.ts';
+import { dealAnswer, dealParams, rulingRequest, takeUpRequest } from '#shared/schemas/deals.ts';
 import { deskDealsAnswer } from '#shared/schemas/desk.ts';
 import { reasonRequest } from '#shared/schemas/lots.ts';
 import { withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
+import { databaseNow } from '#server/database/transaction.ts';
 import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
 import { answerDeal, changeDeal } from './answer-deal.ts';
-import { presentContestedDeals } from './deal-presenter.ts';
-import { findDealIds, listContestedDeals } from './deal-queries.ts';
+import { presentDeskDeals } from './deal-presenter.ts';
+import { findDealIds, listContestedDeals, listOverdueInspections } from './deal-queries.ts';
 import { freezeDeal, unfreezeDeal } from './freeze-deal.ts';
 import { ruleDeal } from './rule-deal.ts';
+import { takeUpDeal } from './take-up-deal.ts';
 
 type DealParams = z.infer<typeof dealParams>;
 
@@ -16,12 +18,16 @@ export const deskDealRoutes: RouteDefinition[] = [
   defineRoute({
     method: 'get',
     path: '/api/v1/desk/deals',
-    summary: 'Contested deals, the oldest first',
+    summary: 'Deals that wait for the desk: contested ones, and deliveries that got no answer in time',
     access: 'desk',
     limit: 'read',
     answer: deskDealsAnswer,
     handle: async ({ actor, res }) => {
-      res.json(presentContestedDeals(await listContestedDeals(), actor));
+      const [contested, overdue] = await Promise.all([
+        listContestedDeals(),
+        listOverdueInspections(await databaseNow()),
+      ]);
+      res.json(presentDeskDeals({ contested, overdue }, actor));
     },
   }),
   defineRoute<DealParams, unknown, z.infer<typeof rulingRequest>>({
@@ -42,6 +48,21 @@ export const deskDealRoutes: RouteDefinition[] = [
         return { status: 200, answer: await answerDeal(id, actor, unit) };
       });
       res.status(status).json(answer);
+    },
+  }),
+  defineRoute<DealParams, unknown, z.infer<typeof takeUpRequest>>({
+    method: 'post',
+    path: '/api/v1/desk/deals/:code/take-up',
+    summary: 'Take up a delivered deal that the buyer has not answered in time; it then waits for a ruling',
+    access: 'desk',
+    limit: 'write',
+    params: dealParams,
+    body: takeUpRequest,
+    answer: dealAnswer,
+    handle: async ({ params, body, actor, res }) => {
+      res.json(
+        await changeDeal(params.code, actor, (dealId, unit) => takeUpDeal({ ...body, dealId }, unit, actor)),
+      );
     },
   }),
   defineRoute<DealParams, unknown, z.infer<typeof reasonRequest>>({

@@ -22,6 +22,13 @@ export async function readDealFor(
   return deal;
 }
 
+/** Reads a deal for whoever may see it: its sides and the desk. Throws `not-found`. */
+export async function readVisibleDeal(dealId: string, actor: Actor): Promise<Deal> {
+  const deal = await loadDeal(dealId);
+  if (sideOf(actor, deal) === null) throw new NotFoundError();
+  return deal;
+}
+
 /** Reads a deal, under its lock, for an act of the desk. Throws `not-found`, `own-case`. */
 export async function readDealForDesk(dealId: string, unit: Unit, actor: Actor): Promise<Deal> {
   const deal = await loadDeal(dealId, unit.tx);

@@ -1,4 +1,3 @@
-import { pipeline } from 'node:stream/promises';
 import type { Response } from 'express';
 import { z } from 'zod';
 import { PHOTO_BYTES_MAX } from '#shared/limits.ts';
@@ -14,43 +13,34 @@ import { NotFoundError } from '#server/app-error.ts';
 import { withTransaction } from '#server/database/transaction.ts';
 import { findLotPhotos, findVisibleLot } from '#server/features/lots/lot-queries.ts';
 import { lotIdOf } from '#server/features/lots/own-lot.ts';
-import { storage } from '#server/integrations/storage.ts';
 import { receivedFile, receiveFile } from '#server/middleware/receive-file.ts';
 import { LotPhoto } from '#server/models/lot-photo.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import { defineRoute, type Actor, type RouteDefinition } from '#server/routing/define-route.ts';
 import { captionPhoto, orderPhotos, removePhoto } from './change-photos.ts';
 import { photoAnswerOf } from './photo-answer.ts';
-import { photoSizeKey } from './photo-files.ts';
-import { PHOTO_MEDIA_TYPE, PHOTO_SIZES, type PhotoSize } from './process-photo.ts';
 import { removeFiles } from './remove-files.ts';
+import { photoSizeText, sendPhoto } from './send-photo.ts';
 import { uploadPhoto } from './upload-photo.ts';
 
 const PHOTOS = '/api/v1/lots/:code/photos';
 const photoParams = lotParams.extend({ id: z.uuid() });
-const sizeParams = z.object({
-  id: z.uuid(),
-  size: z.enum(PHOTO_SIZES.map(String) as [string, ...string[]]),
-});
+const sizeParams = z.object({ id: z.uuid(), size: photoSizeText });
 
 async function answerPhotos(lotId: string, res: Response): Promise<void> {
   res.json({ photos: (await findLotPhotos(lotId)).map(photoAnswerOf) });
 }
 
-async function sendPhoto(id: string, size: PhotoSize, viewer: Actor | null, res: Response): Promise<void> {
+async function sendLotPhoto(
+  { id, size }: z.infer<typeof sizeParams>,
+  viewer: Actor | null,
+  res: Response,
+): Promise<void> {
   const photo = await LotPhoto.findByPk(id, { include: [{ model: StoredFile, as: 'file' }] });
   if (photo === null || photo.file === undefined) throw new NotFoundError();
   const { lot } = await findVisibleLot({ id: photo.lotId }, viewer);
-  const bytes = await storage.get(photoSizeKey(photo.file.storageKey, size));
-  if (bytes === null) throw new NotFoundError();
   const isPublic = PUBLIC_LOT_STATES.includes(lot.state);
-  res.set({
-    'Content-Type': PHOTO_MEDIA_TYPE,
-    'Cache-Control': isPublic ? 'public, max-age=31536000, immutable' : 'private, no-store',
-    'Content-Security-Policy': "default-src 'none'; sandbox",
-    'X-Content-Type-Options': 'nosniff',
-  });
-  await pipeline(bytes, res);
+  await sendPhoto({ storageKey: photo.file.storageKey, size, isPublic }, res);
 }
 
 const writeRoutes: RouteDefinition[] = [
@@ -131,9 +121,7 @@ export const photoRoutes: RouteDefinition[] = [
     limit: 'read',
     params: sizeParams,
     handle: async ({ params, res, viewer }) => {
-      const size = PHOTO_SIZES.find((known) => String(known) === params.size);
-      if (size === undefined) throw new NotFoundError();
-      await sendPhoto(params.id, size, viewer, res);
+      await sendLotPhoto(params, viewer, res);
     },
   }),
 ];

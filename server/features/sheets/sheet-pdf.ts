@@ -3,6 +3,7 @@ import { TZDate } from '@date-fns/tz';
 import { format } from 'date-fns';
 import PDFDocument from 'pdfkit';
 import { METAL_NAMES } from '#shared/metals.ts';
+import { shortQuoteNumber } from '#shared/quote-number.ts';
 import type { SettlementSheet, SheetLine } from '#shared/settlement/sheet-types.ts';
 
 export type SheetPdfInput = {
@@ -179,7 +180,7 @@ function lineRow(doc: Doc, line: SheetLine): void {
 function noteLines({ sheet, timeZone }: SheetPdfInput): string[] {
   const quotes = sheet.quotes.map(({ metal, usdPerTroyOunce, at, source, id }) => {
     const when = at === null ? '' : `, quote of ${momentText(at, timeZone)}`;
-    return `${METAL_NAMES[metal]}: US$ ${grouped(withCents(usdPerTroyOunce))} per oz t fine${when}, ${source}${id === null ? '' : `, no. ${id}`}.`;
+    return `${METAL_NAMES[metal]}: US$ ${grouped(withCents(usdPerTroyOunce))} per oz t fine${when}, ${source}${id === null ? '' : `, no. ${shortQuoteNumber(id)}`}.`;
   });
   const { low, high } = sheet.melt;
   return [

@@ -3,7 +3,7 @@ import { apiSend } from '../../../lib/api-client.ts';
 import { dealUrl } from '../../../lib/deals.ts';
 
 type SideAct = 'ship' | 'confirm-delivery' | 'receipt' | 'contest';
-type DeskAct = 'freeze' | 'unfreeze';
+type DeskAct = 'take-up' | 'freeze' | 'unfreeze';
 
 /** Acts that move no money; each answers the deal as it then stands. */
 export function sendAct(code: string, act: SideAct, body: unknown = {}): Promise<DealAnswer> {

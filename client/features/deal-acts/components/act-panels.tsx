@@ -9,6 +9,7 @@ import { ReceiptForm } from './receipt-form.tsx';
 import { RulingForm } from './ruling-form.tsx';
 import { ShipForm } from './ship-form.tsx';
 import { ConfirmDeliveryPanel, UnfreezePanel } from './simple-act-panel.tsx';
+import { TakeUpForm } from './take-up-form.tsx';
 
 type PanelProps = { deal: DealAnswer; onClose: () => void };
 
@@ -20,6 +21,7 @@ const panels: Record<DealAct, ComponentType<PanelProps>> = {
   accept: AcceptPanel,
   contest: ContestForm,
   rule: RulingForm,
+  takeUp: TakeUpForm,
   freeze: FreezeForm,
   unfreeze: UnfreezePanel,
 };

@@ -7,8 +7,11 @@ import { useReader } from '../../../lib/reader-context.ts';
 import { useForm } from '../../../lib/use-form.ts';
 import { sendAct } from '../api/send-act.ts';
 import { useDealChanged, useDealReload } from '../hooks/use-deal-changed.ts';
-import { readReceivedMass, type ReceivedValues } from '../read-received-mass.ts';
+import { readReceipt, readReceivedMass, type ReceivedValues } from '../read-received-mass.ts';
+import { useReceiptPhoto } from '../hooks/use-receipt-photo.ts';
 import { ActPanel } from './act-panel.tsx';
+import { ReceiptPhotoField } from './receipt-photo-field.tsx';
+import { ScalesAgree } from './scales-agree.tsx';
 
 type ReceiptFormProps = { deal: DealAnswer; onClose: () => void };
 
@@ -16,10 +19,11 @@ type ReceiptFormProps = { deal: DealAnswer; onClose: () => void };
 export function ReceiptForm({ deal, onClose }: ReceiptFormProps) {
   const changed = useDealChanged(deal.code);
   const { weightUnit } = useReader();
+  const photo = useReceiptPhoto(deal.code);
   const form = useForm({
-    initial: { mass: '', unit: weightUnit } as ReceivedValues,
-    read: readReceivedMass,
-    send: (mass) => sendAct(deal.code, 'receipt', { mass }),
+    initial: { mass: '', unit: weightUnit, photoFileId: '' } as ReceivedValues,
+    read: (values) => readReceipt(values, photo),
+    send: (input) => sendAct(deal.code, 'receipt', input),
     onDone: (answer) => changed(answer, 'The received mass is recorded.'),
     onRefused: useDealReload(deal.code),
   });
@@ -38,8 +42,9 @@ export function ReceiptForm({ deal, onClose }: ReceiptFormProps) {
         counterparty: 'the seller and the desk, who see it in the register',
         consequence: form.asked && (
           <p>
-            You weighed <Mass entry={form.asked} others />. It is recorded once and cannot be changed; it
-            moves no money.
+            You weighed <Mass entry={form.asked.mass} others />
+            {form.asked.photoFileId === null ? ', without a photo' : ', with your photo'}. It is recorded once
+            and cannot be changed; it moves no money.
           </p>
         ),
         confirmText: 'Record the received mass',
@@ -83,6 +88,8 @@ export function ReceiptForm({ deal, onClose }: ReceiptFormProps) {
           )}
         </Field>
       </div>
+      <ScalesAgree lot={deal.lot} typed={typed.input} />
+      <ReceiptPhotoField id={form.fieldId('photoFileId')} photo={photo} error={form.errorOf('photoFileId')} />
     </ActPanel>
   );
 }

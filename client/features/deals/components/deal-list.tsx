@@ -29,7 +29,7 @@ function DueLine({ row }: { row: DealRow }) {
   if (row.due === null)
     return (
       <span className="text-ink-2">
-        since <Time at={row.updatedAt} />
+        since <Time at={row.closedAt ?? row.updatedAt} />
       </span>
     );
   const { act, at, who, silence } = row.due;

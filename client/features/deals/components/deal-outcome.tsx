@@ -2,7 +2,7 @@ import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { Money } from '../../../components/figures/money.tsx';
 import { Notice } from '../../../components/ui/notice.tsx';
 import { Time } from '../../../components/ui/time.tsx';
-import { contestReasons, payoutWord, refundWord } from '../../../components/figures/deal-words.ts';
+import { contestWord, payoutWord, refundWord } from '../../../components/figures/deal-words.ts';
 
 /** What became of the money, and what stands against the deal, in words. */
 export function DealOutcome({ deal }: { deal: DealAnswer }) {
@@ -16,7 +16,7 @@ export function DealOutcome({ deal }: { deal: DealAnswer }) {
         </Notice>
       )}
       {contest && (
-        <Notice tone="attention" title={`Contested: ${contestReasons[contest.reason].label.toLowerCase()}`}>
+        <Notice tone="attention" title={contestWord(contest.reason)}>
           <p className="whitespace-pre-line">{contest.note}</p>
           <p className="mt-1 text-note text-ink-2">
             <Time at={contest.at} />

@@ -46,6 +46,9 @@ const delivered = (changes: Partial<DealAnswer> = {}) =>
     ...changes,
   });
 
+// jsdom has no object URLs.
+Object.assign(globalThis.URL, { createObjectURL: () => 'blob:preview', revokeObjectURL: () => undefined });
+
 beforeEach(() => vi.mocked(leaveTo).mockClear());
 
 describe('the deal page', () => {
@@ -148,14 +151,24 @@ describe('the deal page', () => {
   });
 
   it('records the received mass as typed and says whether the scales agree', async () => {
+    const fileId = '0193ad1c-77d0-7e0b-9f5a-1c2ba87298d8';
     const receipt = {
       mass: { value: '31.019', unit: 'g' },
       differenceGrams: '-0.005',
       isWithinScales: false,
       at: '2026-12-06T12:00:00.000Z',
+      photoUrl: `${URL}/receipt-photo/2000`,
+      photoThumb: `${URL}/receipt-photo/240`,
     };
     let sent: unknown;
+    const photos: number[] = [];
     apiServer.use(
+      http.post(`${URL}/receipt-photo`, async ({ request }) => {
+        photos.push((await request.arrayBuffer()).byteLength);
+        return photos.length === 1
+          ? problem(415, 'photo-not-an-image', 'This is not a photo that can be read')
+          : HttpResponse.json({ fileId }, { status: 201 });
+      }),
       http.post(`${URL}/receipt`, async ({ request }) => {
         sent = await request.json();
         return HttpResponse.json(
@@ -171,17 +184,62 @@ describe('the deal page', () => {
     await user.click(screen.getByRole('button', { name: 'Record this mass' }));
     expect(mass).toHaveAccessibleDescription(/Write it with a dot, or without the comma/);
     await user.clear(mass);
+    await user.type(mass, '31.023');
+    const form = within(screen.getByRole('form', { name: 'The mass you received' }));
+    expect(form.getByRole('status')).toHaveTextContent(/Difference: 0\.001.g less\. The two weighings agree/);
+    await user.clear(mass);
     await user.type(mass, '31.019');
+    expect(form.getByRole('status')).toHaveTextContent(
+      /Difference: 0\.005.g less\. The two weighings differ/,
+    );
+    const chooser = document.querySelector<HTMLInputElement>('input[type=file]')!;
+    const button = screen.getByRole('button', { name: /^Photo of the weighing/ });
+    await user.upload(chooser, new File(['no'], 'balance.jpg', { type: 'image/jpeg' }));
+    await waitFor(() => expect(button).toHaveAccessibleDescription(/balance.jpg: This is not a photo/));
+    await user.upload(chooser, new File(['yes'], 'display.jpg', { type: 'image/jpeg' }));
+    expect(await screen.findByText('display.jpg')).toBeVisible();
     await user.click(screen.getByRole('button', { name: 'Record this mass' }));
     await user.click(
       within(screen.getByRole('region', { name: 'Confirm' })).getByRole('button', {
         name: 'Record the received mass',
       }),
     );
-    expect(await screen.findByText(/differ by more than both scales can explain/)).toBeVisible();
-    expect(sent).toEqual({ mass: { value: '31.019', unit: 'g' } });
+    expect(await screen.findByText(/differ by more than one step of each balance/)).toBeVisible();
+    expect(sent).toEqual({ mass: { value: '31.019', unit: 'g' }, photoFileId: fileId });
+    expect(screen.getByRole('link', { name: 'The buyer’s photo of the weighing' })).toHaveAttribute(
+      'href',
+      `${URL}/receipt-photo/2000`,
+    );
     expect(screen.getByRole('region', { name: 'Received mass' })).toHaveTextContent('0.005 g less');
     expect(screen.getByRole('region', { name: 'Register of the deal' })).toHaveFocus();
+  });
+
+  it('names both sides for the desk and lets it take up what got no answer', async () => {
+    let sent: unknown;
+    apiServer.use(
+      http.post('/api/v1/desk/deals/D-81QX2A/take-up', async ({ request }) => {
+        sent = await request.json();
+        const note = 'Asked twice, without an answer.';
+        const contest = { reason: 'not_answered' as const, note, at: '2026-12-12T12:00:00.000Z' };
+        return HttpResponse.json(delivered({ side: 'desk', state: 'contested', contest, can: noAbilities }));
+      }),
+    );
+    await open(delivered({ side: 'desk', can: { ...noAbilities, takeUp: true } }));
+    expect(screen.getByText(/Tomas Reeve, Dunmere, buys from Ines Marlow, Harrow Vale/)).toBeVisible();
+    const user = userEvent.setup();
+    await user.click(screen.getByRole('button', { name: 'Take up the deal' }));
+    await user.click(screen.getByRole('button', { name: 'Take it up' }));
+    expect(screen.getByRole('alert')).toHaveTextContent('Give both sides the reason');
+    await user.type(
+      screen.getByRole('textbox', { name: 'Reason for both sides' }),
+      'Asked twice, without an answer.',
+    );
+    await user.click(screen.getByRole('button', { name: 'Take it up' }));
+    const confirm = screen.getByRole('region', { name: 'Confirm' });
+    expect(confirm).toHaveTextContent('4,121.35');
+    await user.click(within(confirm).getByRole('button', { name: 'Take up the deal' }));
+    expect(await screen.findByText(/Taken up by the desk: the buyer has not answered/)).toBeVisible();
+    expect(sent).toEqual({ reason: 'Asked twice, without an answer.' });
   });
 
   it('shows a refused acceptance in place and reads the deal again', async () => {

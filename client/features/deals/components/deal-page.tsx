@@ -9,24 +9,28 @@ import { Stamp } from '../../../components/ui/stamp.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { paths } from '../../../lib/paths.ts';
 import { dealQuery } from '../../../lib/deals.ts';
-import { counterpartyText, stateWord } from '../../../components/figures/deal-words.ts';
+import { partyText, stateWord } from '../../../components/figures/deal-words.ts';
 import { DealOutcome } from './deal-outcome.tsx';
 import { DealPapers } from './deal-papers.tsx';
 import { DealParcel } from './deal-parcel.tsx';
 import { DealSums } from './deal-sums.tsx';
 
-const roles = { buyer: 'You buy from', seller: 'You sell to', desk: 'For the desk; the buyer is' } as const;
+function sidesText(deal: DealAnswer): string {
+  if (deal.side === 'buyer') return `You buy from ${partyText(deal.seller)}`;
+  if (deal.side === 'seller') return `You sell to ${partyText(deal.buyer)}`;
+  return `${partyText(deal.buyer)}, buys from ${partyText(deal.seller)}`;
+}
 
 function DealSub({ deal }: { deal: DealAnswer }) {
   return (
     <>
-      {roles[deal.side]} {counterpartyText(deal)} · lot{' '}
+      {sidesText(deal)} · lot{' '}
       <Link to={paths.lot(deal.lot.code)} className="link">
         <span className="fig">{deal.lot.code}</span>
       </Link>{' '}
       · agreed <Time at={deal.agreedAt} /> ·{' '}
       <Link to={deal.side === 'desk' ? paths.deskDeals() : paths.deals()} className="link no-print">
-        {deal.side === 'desk' ? 'Contested deals' : 'Where I stand'}
+        {deal.side === 'desk' ? 'Deals for the desk' : 'Where I stand'}
       </Link>
     </>
   );

@@ -4,7 +4,7 @@ import { SettlementSheetView } from '../../../components/figures/settlement-shee
 /** The sheets of the deal, the final one first, and its documents. */
 export function DealPapers({ deal }: { deal: DealAnswer }) {
   const pdf = `/api/v1/deals/${encodeURIComponent(deal.code)}/sheet.pdf`;
-  const side = deal.side === 'desk' ? ', as the seller reads it' : '';
+  const side = deal.side === 'desk' ? ', the seller’s' : '';
   return (
     <section aria-labelledby="deal-papers" className="mt-10 border-t border-rule pt-8">
       <div className="mb-4 flex flex-wrap items-baseline justify-between gap-x-8 gap-y-2">

@@ -2,11 +2,11 @@ import type { MassUnit } from '#shared/mass.ts';
 import type { DealAnswer } from '#shared/schemas/deals.ts';
 import { Mass } from '../../../components/figures/mass.tsx';
 import { Money } from '../../../components/figures/money.tsx';
-import { Quantity } from '../../../components/figures/quantity.tsx';
+import { MassDifference } from '../../../components/figures/mass-difference.tsx';
 import { DataList } from '../../../components/ui/data-list.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { countryName } from '../../../lib/countries.ts';
-import { isNothing, parcelWord } from '../../../components/figures/deal-words.ts';
+import { parcelWord, scalesWord } from '../../../components/figures/deal-words.ts';
 
 type Part<K extends 'parcel' | 'receipt' | 'delivery'> = NonNullable<DealAnswer[K]>;
 
@@ -27,8 +27,6 @@ function ParcelFacts({ parcel }: { parcel: Part<'parcel'> }) {
 }
 
 function ReceivedMass({ receipt, lot }: { receipt: Part<'receipt'>; lot: DealAnswer['lot'] }) {
-  const difference = receipt.differenceGrams;
-  const isLess = difference.startsWith('-');
   return (
     <>
       <DataList
@@ -41,26 +39,30 @@ function ReceivedMass({ receipt, lot }: { receipt: Part<'receipt'>; lot: DealAns
             term: 'Received',
             data: <Mass entry={{ value: receipt.mass.value, unit: receipt.mass.unit as MassUnit }} others />,
           },
-          {
-            term: 'Difference',
-            data: isNothing(difference) ? (
-              'none'
-            ) : (
-              <>
-                <Quantity value={difference.replace('-', '')} unit="g" /> {isLess ? 'less' : 'more'}
-              </>
-            ),
-          },
+          { term: 'Difference', data: <MassDifference grams={receipt.differenceGrams} /> },
         ]}
       />
       <p className={`mt-2 ${receipt.isWithinScales ? 'text-verdigris' : 'text-litharge'} font-medium`}>
-        {receipt.isWithinScales
-          ? 'The two weighings agree within what both scales can tell apart.'
-          : 'The two weighings differ by more than both scales can explain.'}
+        {scalesWord(receipt.isWithinScales)}
       </p>
       <p className="text-note text-ink-2">
-        Recorded <Time at={receipt.at} />. Each balance counts with its readability as a rectangle, k = 2.
+        Recorded <Time at={receipt.at} />.
       </p>
+      {receipt.photoUrl && receipt.photoThumb && (
+        <a
+          href={receipt.photoUrl}
+          target="_blank"
+          rel="noreferrer"
+          className="mt-3 flex w-fit items-center gap-3"
+        >
+          <img
+            src={receipt.photoThumb}
+            alt=""
+            className="size-24 rounded-box border border-rule bg-sheet object-cover"
+          />
+          <span className="link">The buyer’s photo of the weighing</span>
+        </a>
+      )}
     </>
   );
 }

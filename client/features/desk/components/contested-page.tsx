@@ -1,4 +1,5 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
+import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import type { DeskDealsAnswer } from '#shared/schemas/desk.ts';
 import { EmptyState } from '../../../components/ui/empty-state.tsx';
@@ -8,7 +9,11 @@ import { paths } from '../../../lib/paths.ts';
 import { deskDealsQuery } from '../api/desk-deals.ts';
 import { DeskPage } from './desk-page.tsx';
 
-function Row({ deal }: { deal: DeskDealsAnswer['contested'][number] }) {
+type Contested = DeskDealsAnswer['contested'][number];
+type Overdue = DeskDealsAnswer['overdue'][number];
+type RowProps = { deal: Contested | Overdue; what: ReactNode; due: ReactNode };
+
+function Row({ deal, what, due }: RowProps) {
   return (
     <li className="grid gap-x-6 gap-y-1 border-b border-rule py-3 md:grid-cols-[minmax(0,4fr)_minmax(0,4fr)_minmax(0,2fr)_minmax(0,4fr)]">
       <div>
@@ -24,22 +29,58 @@ function Row({ deal }: { deal: DeskDealsAnswer['contested'][number] }) {
           {deal.isOwn && '; your own deal, for a colleague'}
         </div>
       </div>
-      <div>
-        {deal.reason}
-        <div className="text-note text-ink-2">
-          contested <Time at={deal.contestedAt} />
-        </div>
-      </div>
+      <div>{what}</div>
       <div className="fig md:text-right">{formatMoney(deal.total)}</div>
-      <div>
-        <span className="text-ink-2">decide by </span>
-        <Deadline at={deal.decideBy} />
-      </div>
+      <div>{due}</div>
     </li>
   );
 }
 
-/** Deals that wait for a ruling; the ruling is given on the deal's own page. */
+function ContestedRow({ deal }: { deal: Contested }) {
+  return (
+    <Row
+      deal={deal}
+      what={
+        <>
+          {deal.reason}
+          <span className="block text-note text-ink-2">
+            contested <Time at={deal.contestedAt} />
+          </span>
+        </>
+      }
+      due={
+        <>
+          <span className="text-ink-2">decide by </span>
+          <Deadline at={deal.decideBy} />
+        </>
+      }
+    />
+  );
+}
+
+function OverdueRow({ deal }: { deal: Overdue }) {
+  return (
+    <Row
+      deal={deal}
+      what={
+        <>
+          Neither accepted nor contested
+          <span className="block text-note text-ink-2">
+            delivered <Time at={deal.deliveredAt} />
+          </span>
+        </>
+      }
+      due={
+        <>
+          <span className="text-ink-2">to be inspected by </span>
+          <Time at={deal.inspectBy} />
+        </>
+      }
+    />
+  );
+}
+
+/** Deals that wait for a ruling or may be taken up; both is done on the deal's own page. */
 export function ContestedPage() {
   const { data } = useSuspenseQuery(deskDealsQuery);
   return (
@@ -49,9 +90,22 @@ export function ContestedPage() {
       ) : (
         <ol className="border-t border-rule">
           {data.contested.map((deal) => (
-            <Row key={deal.code} deal={deal} />
+            <ContestedRow key={deal.code} deal={deal} />
           ))}
         </ol>
+      )}
+      {data.overdue.length > 0 && (
+        <section aria-labelledby="overdue-inspections" className="mt-10">
+          <h2 id="overdue-inspections">Overdue inspections</h2>
+          <p className="mb-3 max-w-prose text-ink-2">
+            The buyer’s days to inspect are over without a word. The desk can take such a deal up and rule.
+          </p>
+          <ol className="border-t border-rule">
+            {data.overdue.map((deal) => (
+              <OverdueRow key={deal.code} deal={deal} />
+            ))}
+          </ol>
+        </section>
       )}
     </DeskPage>
   );

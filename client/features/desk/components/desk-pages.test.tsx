@@ -180,7 +180,17 @@ describe('contested deals and the audit trail', () => {
       isOwn: false,
     };
     const own = { ...deal, code: 'D-3M8G5R', lotTitle: 'My own', isOwn: true };
-    apiServer.use(http.get('/api/v1/desk/deals', () => HttpResponse.json({ contested: [deal, own] })));
+    const late = {
+      code: 'D-7Q2M4T',
+      lotTitle: 'Grain of gold',
+      deliveredAt: '2026-11-20T09:00:00.000Z',
+      inspectBy: '2026-11-25T09:00:00.000Z',
+      total: '940.00',
+      isOwn: false,
+    };
+    apiServer.use(
+      http.get('/api/v1/desk/deals', () => HttpResponse.json({ contested: [deal, own], overdue: [late] })),
+    );
     open('/desk/deals');
     expect(await screen.findByRole('link', { name: 'Bar of silver' })).toHaveAttribute(
       'href',
@@ -188,6 +198,8 @@ describe('contested deals and the audit trail', () => {
     );
     expect(screen.getAllByText(/US\$\s1,925\.00/)).toHaveLength(2);
     expect(screen.queryByRole('link', { name: 'My own' })).toBeNull();
+    const overdue = within(screen.getByRole('region', { name: 'Overdue inspections' }));
+    expect(overdue.getByRole('link', { name: 'Grain of gold' })).toHaveAttribute('href', '/deals/D-7Q2M4T');
   });
 
   it('fetches earlier lines on request', async () => {

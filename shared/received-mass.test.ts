@@ -1,7 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { compareReceivedMass } from './received-mass.ts';
+import { compareReceivedMass, type StatedMass } from './received-mass.ts';
 
-const lot = { grossValue: '31.62', grossUnit: 'g', readabilityValue: '0.01', readabilityUnit: 'g' };
+const lot: StatedMass = {
+  gross: { value: '31.62', unit: 'g' },
+  readability: { value: '0.01', unit: 'g' },
+};
 
 describe('compareReceivedMass', () => {
   it('agrees with the same reading', () => {
@@ -30,7 +33,10 @@ describe('compareReceivedMass', () => {
   });
 
   it('compares across units exactly', () => {
-    const ounce = { grossValue: '1', grossUnit: 'ozt', readabilityValue: '0.001', readabilityUnit: 'ozt' };
+    const ounce: StatedMass = {
+      gross: { value: '1', unit: 'ozt' },
+      readability: { value: '0.001', unit: 'ozt' },
+    };
     expect(compareReceivedMass(ounce, { value: '31.103477', unit: 'g' })).toEqual({
       differenceGrams: '0',
       isWithinScales: true,
@@ -38,8 +44,12 @@ describe('compareReceivedMass', () => {
   });
 
   it('takes the last digit typed where the lot gives no readability', () => {
-    const silent = { ...lot, readabilityValue: null, readabilityUnit: null };
+    const silent = { ...lot, readability: null };
     expect(compareReceivedMass(silent, { value: '31.625', unit: 'g' }).isWithinScales).toBe(true);
     expect(compareReceivedMass(silent, { value: '31.632', unit: 'g' }).isWithinScales).toBe(false);
+  });
+
+  it('refuses what is no mass', () => {
+    expect(() => compareReceivedMass(lot, { value: '0', unit: 'g' })).toThrow(/above 0/);
   });
 });

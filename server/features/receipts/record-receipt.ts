@@ -2,16 +2,16 @@ import type { z } from 'zod';
 import { MeasureError } from '#shared/domain-error.ts';
 import { canonicalGrams, massText, type MassEntry } from '#shared/mass.ts';
 import type { receiptRequest } from '#shared/schemas/deals.ts';
-import { ConflictError, InvalidError } from '#server/app-error.ts';
+import { InvalidError } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
+import { recordDealEvent } from '#server/features/deals/move-deal.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { DealReceipt } from '#server/models/deal-receipt.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';
-import { recordDealEvent } from './move-deal.ts';
-import { assertState, readDealFor } from './read-own-deal.ts';
-import { compareReceivedMass } from './received-mass.ts';
+import { compareWithLot } from './compare-with-lot.ts';
+import { readDealToReceive } from './read-deal-to-receive.ts';
 
 type ReceiptRequest = z.infer<typeof receiptRequest>;
 
@@ -30,7 +30,9 @@ function readMass(mass: ReceiptRequest['mass']): { entry: MassEntry; grams: stri
 async function assertOwnPhoto(fileId: string | null, unit: Unit, actor: Actor): Promise<void> {
   if (fileId === null) return;
   const file = await StoredFile.findByPk(fileId, { transaction: unit.tx });
-  if (file !== null && file.ownerId === actor.id) return;
+  const isOwn = file !== null && file.ownerId === actor.id && file.kind === 'receipt_photo';
+  const uses = await DealReceipt.count({ where: { photoFileId: fileId }, transaction: unit.tx });
+  if (isOwn && uses === 0) return;
   throw new InvalidError([
     { pointer: '/photoFileId', code: 'photo-unknown', message: 'Upload the photo again' },
   ]);
@@ -46,14 +48,7 @@ export async function recordReceipt(
   unit: Unit,
   actor: Actor,
 ): Promise<Deal> {
-  const deal = await readDealFor('buyer', input.dealId, unit, actor);
-  assertState(
-    deal,
-    ['delivered'],
-    'The mass is recorded after the delivery and before accepting or contesting.',
-  );
-  if ((deal.receipt ?? null) !== null)
-    throw new ConflictError('illegal-transition', 'The received mass is recorded already.');
+  const deal = await readDealToReceive(input.dealId, unit, actor);
   const { entry, grams } = readMass(input.mass);
   await assertOwnPhoto(input.photoFileId, unit, actor);
   await DealReceipt.create(
@@ -68,7 +63,7 @@ export async function recordReceipt(
     },
     { transaction: unit.tx },
   );
-  const comparison = deal.lot === undefined ? {} : compareReceivedMass(deal.lot, entry);
+  const comparison = deal.lot === undefined ? {} : compareWithLot(deal.lot, entry);
   return recordDealEvent(
     deal,
     {
