@@ -13,6 +13,7 @@ type Room = { to: string; name: string; isOpenTo: (member: MemberAnswer | null) 
 const everyone = () => true;
 const rooms: Room[] = [
   { to: paths.register(), name: 'Market', isOpenTo: everyone },
+  { to: paths.sell(), name: 'Sell', isOpenTo: (member) => member !== null },
   { to: paths.deals(), name: 'Deals', isOpenTo: (member) => member !== null },
   { to: paths.desk(), name: 'Desk', isOpenTo: (member) => member?.can.useDesk ?? false },
   { to: paths.worth(), name: 'What is it worth?', isOpenTo: everyone },

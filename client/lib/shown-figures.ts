@@ -1,5 +1,5 @@
-import { dec, fixed, plain } from '#shared/decimal.ts';
-import { GRAMS_PER_UNIT } from '#shared/mass.ts';
+import { dec, decimalsTyped, fixed, lastDigitOf, plain } from '#shared/decimal.ts';
+import { fromGrams, GRAMS_PER_UNIT, type MassEntry } from '#shared/mass.ts';
 import type { ReadingUnit } from '#shared/mass-in-units.ts';
 import { fromAmount, minorToAmount } from '#shared/money.ts';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
@@ -7,6 +7,19 @@ import type { LotAnswer } from '#shared/schemas/lots.ts';
 /** A fineness for reading: karat thirds go on for ever, three digits after the dot are more than any assay tells. */
 export function shownPermille(permille: string): string {
   return plain(dec(fixed(dec(permille), 3)));
+}
+
+const FINE_PLACES_MAX = 6;
+
+/**
+ * A fine content for reading, in the reader's unit: with the digits of the gross mass in its own unit, in another with as
+ * many as tell no more than the balance did.
+ */
+export function shownFine(fineGrams: string, gross: MassEntry, unit: ReadingUnit): string {
+  const step = lastDigitOf(gross.value).times(GRAMS_PER_UNIT[gross.unit]).div(GRAMS_PER_UNIT[unit]);
+  const digits = gross.unit === unit ? decimalsTyped(gross.value) : -step.log(10).floor().toNumber();
+  const places = Math.min(FINE_PLACES_MAX, Math.max(0, digits));
+  return fixed(fromGrams(dec(fineGrams), unit), places);
 }
 
 /** US$ per troy ounce told per unit of the reader, by the exact factors; the troy ounce's own figure stays as it came. */

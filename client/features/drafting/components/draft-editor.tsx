@@ -22,6 +22,9 @@ import { PayoutsFirst } from './payouts-first.tsx';
 import { SaveLine } from './save-line.tsx';
 import { SubmitQuestion } from './submit-question.tsx';
 
+/** On a narrow screen the bar is one row of buttons, so that it hides no field. */
+const compact = 'max-sm:min-h-9 max-sm:px-3 max-sm:py-1 max-sm:text-note';
+
 type DraftEditorProps = {
   lot: LotAnswer;
   draft: LotDraft;
@@ -72,12 +75,14 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
           <DraftFormContext value={form}>
             <DraftFormFields evidence={evidence} />
           </DraftFormContext>
-          <div className="no-print sticky bottom-0 z-10 -mx-1 border-t border-line bg-paper px-1 py-3">
+          <div className="no-print sticky bottom-0 z-10 -mx-1 border-t border-line bg-paper px-1 py-1.5 sm:py-3">
             {submission.isConfirming ? (
               <SubmitQuestion submission={submission} draft={draft} />
             ) : (
-              <div className="flex flex-wrap items-center gap-3">
-                <Button type="submit">Hand the lot to the desk</Button>
+              <div className="flex flex-wrap items-center gap-x-2 gap-y-0.5 sm:gap-3">
+                <Button type="submit" className={compact}>
+                  Hand the lot to the desk
+                </Button>
                 <SaveLine state={state} onSave={() => void save()} />
               </div>
             )}

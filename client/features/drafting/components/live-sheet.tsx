@@ -1,4 +1,3 @@
-import { dec, fixed } from '#shared/decimal.ts';
 import type { LotDraft } from '#shared/schemas/lots.ts';
 import type { QuotesAnswer } from '#shared/schemas/quotes.ts';
 import type { SettlementSheet } from '#shared/settlement/sheet-types.ts';
@@ -8,6 +7,7 @@ import { SettlementSheetView } from '../../../components/figures/settlement-shee
 import { Notice } from '../../../components/ui/notice.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { formatMoney, formatPercent } from '../../../lib/format.ts';
+import { bandOf } from '../../../lib/shown-figures.ts';
 import { useLiveSheet, type NetLine } from '../hooks/use-live-sheet.ts';
 
 const methodNames: Record<NetLine['method'], string> = { card: 'card', bank_debit: 'bank debit' };
@@ -64,19 +64,12 @@ function Waiting({ quotes }: { quotes: QuotesAnswer | undefined }) {
   );
 }
 
-function bandOf({ melt }: SettlementSheet) {
-  const value = dec(melt.value);
-  if (!value.gt(0)) return null;
-  const percent = (end: string) => fixed(dec(end).times(100).div(value), 2);
-  return { low: percent(melt.low), high: percent(melt.high) };
-}
-
 function Rule({ sheet }: { sheet: SettlementSheet }) {
   const at = sheet.quotes.map((quote) => quote.at).sort()[0] ?? null;
   return (
     <div className="sheet p-4">
       <MeltRule
-        band={bandOf(sheet)}
+        band={bandOf(sheet.melt)}
         marks={sheet.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
         quote={{ at }}
       />

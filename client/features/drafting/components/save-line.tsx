@@ -21,16 +21,17 @@ function SaveWords({ state }: { state: SaveState }) {
 /** How the draft stands, and the button that saves it now. */
 export function SaveLine({ state, onSave }: SaveLineProps) {
   return (
-    <div className="flex flex-wrap items-center gap-x-4 gap-y-1">
+    <div className="contents sm:flex sm:flex-wrap sm:items-center sm:gap-x-4 sm:gap-y-1">
       <Button
         look="second"
+        className="max-sm:min-h-9 max-sm:px-3 max-sm:py-1 max-sm:text-note"
         disabled={state.kind === 'conflict'}
         busy={state.kind === 'saving'}
         onClick={onSave}
       >
-        Save the draft
+        Save<span className="sr-only sm:not-sr-only"> the draft</span>
       </Button>
-      <span role="status" className="text-note text-ink-2">
+      <span role="status" className="text-note text-ink-2 max-sm:w-full">
         <SaveWords state={state} />
       </span>
     </div>

@@ -1,13 +1,16 @@
 import { isMetal } from '#shared/metals.ts';
 import type { RegisterRow } from '#shared/schemas/lots.ts';
-import type { MassUnit } from '#shared/mass.ts';
+import { MASS_UNIT_LABELS, type MassUnit } from '#shared/mass.ts';
 import { formName, lotForms, type LotForm } from '../../../components/figures/lot-words.tsx';
 import { Mass } from '../../../components/figures/mass.tsx';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
 import type { MeltMark, RuleWindow } from '../../../components/figures/melt-rule-geometry.ts';
+import { Quantity } from '../../../components/figures/quantity.tsx';
 import { SpecimenDrawing } from '../../../components/figures/specimen-drawing.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { formatLeft } from '../../../lib/format.ts';
+import { useReader } from '../../../lib/reader-context.ts';
+import { shownFine } from '../../../lib/shown-figures.ts';
 import { useNow } from '../../../lib/use-now.ts';
 
 export function lotFormOf(form: string | null): LotForm {
@@ -45,6 +48,13 @@ export function RowFacts({ row }: { row: RegisterRow }) {
 
 export function GrossMass({ row }: { row: RegisterRow }) {
   return <Mass entry={{ value: row.gross.value, unit: row.gross.unit as MassUnit }} />;
+}
+
+/** The fine content of the main metal in the reader's unit, told no finer than the gross mass. */
+export function FineContent({ row }: { row: RegisterRow }) {
+  const { weightUnit } = useReader();
+  const gross = { value: row.gross.value, unit: row.gross.unit as MassUnit };
+  return <Quantity value={shownFine(row.fineGrams, gross, weightUnit)} unit={MASS_UNIT_LABELS[weightUnit]} />;
 }
 
 export function rowMarks(row: RegisterRow): MeltMark[] {

@@ -1,14 +1,13 @@
 import { Link } from 'react-router-dom';
 import type { RegisterRow } from '#shared/schemas/lots.ts';
 import { Fineness } from '../../../components/figures/fineness.tsx';
-import { Mass } from '../../../components/figures/mass.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import type { RuleWindow } from '../../../components/figures/melt-rule-geometry.ts';
 import { formatZone } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { useReader } from '../../../lib/reader-context.ts';
 import { shownPermille } from '../../../lib/shown-figures.ts';
-import { Closes, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
+import { Closes, FineContent, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
 
 export type RegisterListProps = { rows: RegisterRow[]; quotedAt: string | null; window: RuleWindow };
 
@@ -87,7 +86,7 @@ function TableRow({ row, quotedAt, window }: TableRowProps) {
         />
       </td>
       <td className={right}>
-        <Mass entry={{ value: row.fineGrams, unit: 'g' }} />
+        <FineContent row={row} />
         <span className="fig block text-note text-ink-2">{row.mainMetal}</span>
       </td>
       <td className={right}>

@@ -1,6 +1,5 @@
 import { Link } from 'react-router-dom';
 import type { RegisterRow } from '#shared/schemas/lots.ts';
-import { Mass } from '../../../components/figures/mass.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { Quantity } from '../../../components/figures/quantity.tsx';
 import { DataList } from '../../../components/ui/data-list.tsx';
@@ -8,7 +7,7 @@ import { formatDecimal, formatZone, THIN } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { useReader } from '../../../lib/reader-context.ts';
 import { shownPermille } from '../../../lib/shown-figures.ts';
-import { Closes, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
+import { Closes, FineContent, GrossMass, LotThumb, RowFacts, RowRule } from './register-row-parts.tsx';
 import type { RegisterListProps } from './register-table.tsx';
 
 /** The register where columns do not fit: each row a ticket with the same entries. */
@@ -68,7 +67,7 @@ function ticketRows(row: RegisterRow, zone: string) {
     },
     {
       term: `Fine ${row.mainMetal}`,
-      data: <Mass entry={{ value: row.fineGrams, unit: 'g' }} />,
+      data: <FineContent row={row} />,
     },
     { term: `Closes, ${zone}`, data: <Closes row={row} /> },
   ];
