@@ -2,6 +2,7 @@ import type { Page } from 'playwright-core';
 import { beforeAll, describe, expect, inject, it } from 'vitest';
 import { openPayouts, signIn, signUp } from './helpers/accounts.ts';
 import { useBrowser } from './helpers/browser.ts';
+import { dayAgo } from './helpers/evidence.ts';
 import { compareBooks, dealEntries } from './helpers/books.ts';
 import {
   addCertificate,
@@ -35,6 +36,7 @@ const report = {
   mass: '31.204 g',
   mark: 'MA 31',
   permille: '999.2',
+  issuedOn: dayAgo(11),
 };
 const tracking = `VP ${run}`;
 
@@ -101,7 +103,7 @@ describe('a button from the bench to the payout', () => {
     const form = desk.getByRole('form', { name: 'Verify' });
     await form.getByLabel('How was it confirmed?').fill('By telephone, with the number from the register');
     await form.getByLabel('With whom?').fill('Registry of the laboratory');
-    await form.getByLabel('On which day?').fill('2026-12-01');
+    await form.getByLabel('On which day?').fill(dayAgo(0));
     await keepPicture(desk, '06-desk-case');
     await form.getByRole('button', { name: 'Verify the certificate' }).click();
     await form.getByRole('button', { name: `Verify report ${report.number}` }).click();

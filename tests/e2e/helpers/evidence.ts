@@ -2,6 +2,11 @@ import { randomInt } from 'node:crypto';
 import { drawReport } from '#server/database/seeders/draw-report.ts';
 import { drawSpecimen } from '#server/database/seeders/draw-specimen.ts';
 
+/** A calendar day in UTC, so many days ago. */
+export function dayAgo(days: number): string {
+  return new Date(Date.now() - days * 86_400_000).toISOString().slice(0, 10);
+}
+
 type SentFile = { name: string; mimeType: string; buffer: Buffer };
 
 /** A picture that nobody has sent before. */
@@ -11,6 +16,7 @@ export async function newPhoto(name: string): Promise<SentFile> {
 }
 
 export type ReportFacts = {
+  issuedOn: string;
   laboratory: string;
   number: string;
   mass: string;
@@ -29,7 +35,7 @@ export async function newReport(facts: ReportFacts): Promise<SentFile> {
     mass: facts.mass,
     mark: facts.mark,
     sampling: 'sampled by the laboratory from the item',
-    issuedOn: '2026-11-20',
+    issuedOn: facts.issuedOn,
     results: [
       { element: 'Au', permille: facts.permille, uncertainty: '0.5', method: 'fire assay, ISO 11426' },
     ],

@@ -49,7 +49,7 @@ export async function addCertificate(page: Page, facts: ReportFacts): Promise<vo
   const laboratory = report.getByLabel('Laboratory', { exact: true });
   await laboratory.selectOption({ label: facts.laboratory });
   await report.getByRole('textbox', { name: 'Report number' }).fill(facts.number);
-  await report.getByLabel('Issued on').fill('2026-11-20');
+  await report.getByLabel('Issued on').fill(facts.issuedOn);
   await report.getByLabel('Who took the sample').selectOption('laboratory');
   await report.getByRole('button', { name: 'Same mass as the lot' }).click();
   await report.getByRole('textbox', { name: 'Mark on the report' }).fill(facts.mark);
