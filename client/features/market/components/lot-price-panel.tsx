@@ -27,8 +27,8 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
           <p className="text-note text-ink-2">
             {sheet?.percentOfMelt && (
               <>
-                <span className="fig">{formatPercent(sheet.percentOfMelt)}</span> of what its metal is worth
-                now;{' '}
+                <span className="fig">{formatPercent(sheet.percentOfMelt)}</span> of what its metal is worth{' '}
+                {lot.quoteState === 'fresh' ? 'now' : 'at the last accepted quotes'};{' '}
               </>
             )}
             {shipping && (

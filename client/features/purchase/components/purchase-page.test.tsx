@@ -192,6 +192,12 @@ describe('a purchase', () => {
     expect(keys[1]).toBe(keys[0]);
   });
 
+  it('says beside the share of melt that there is no fresh quote', async () => {
+    serveLot(() => buildLot({ quoteState: 'stale' }));
+    openPage(HERE, buildMember());
+    expect(await screen.findByText(/There is no fresh quote: the share of melt rests/)).toBeVisible();
+  });
+
   it('sends a visitor to sign in, and back here afterwards', async () => {
     const router = openPage(HERE);
     await waitFor(() => expect(router.state.location.pathname).toBe('/sign-in'));

@@ -24,6 +24,11 @@ export function PurchaseSum({ lot, total }: PurchaseSumProps) {
                 {formatPercent(lot.sheet.percentOfMelt)} of melt
               </span>
             )}
+            {(lot.quoteState === 'stale' || lot.quoteState === 'partly') && (
+              <span className="block text-note text-litharge">
+                There is no fresh quote: the share of melt rests on an older one. The price stands.
+              </span>
+            )}
           </dt>
           <dd>
             <Money bare value={lot.price?.amount ?? '0'} />
