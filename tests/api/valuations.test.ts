@@ -1,6 +1,6 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import { valuationAnswer } from '#shared/schemas/valuations.ts';
-import { databaseNow, withTransaction } from '#server/database/transaction.ts';
+import { databaseNow, pinDatabaseTime, withTransaction } from '#server/database/transaction.ts';
 import { storeReading } from '#server/features/quotes/store-reading.ts';
 import { startTestApp, type TestApp } from '#tests/helpers/test-app.ts';
 
@@ -170,6 +170,8 @@ describe('bad input', () => {
   });
 });
 
+const fieldsAssumed = (body: unknown) => valuationAnswer.parse(body).assumed.map(({ field }) => field);
+
 describe('without quotes given', () => {
   it('says that there is no quote, then values at the newest accepted one and names it', async () => {
     const { mass, contents } = EXAMPLE;
@@ -184,5 +186,11 @@ describe('without quotes given', () => {
       value: '1521.11',
       quote: { usdPerTroyOunce: '4182.4', at: at.toISOString(), source: 'test' },
     });
+    expect(fieldsAssumed(body)).not.toContain('/quotes/Au');
+    pinDatabaseTime(new Date(at.getTime() + 301_000));
+    const later = await post({ mass, contents });
+    pinDatabaseTime(null);
+    expect(later.status).toBe(200);
+    expect(fieldsAssumed(later.body)).toContain('/quotes/Au');
   });
 });

@@ -38,6 +38,7 @@ export function workingOf(metal: ValuedMetal, body: ValuationBody): string[] {
 /** What an assumed value stands for, in the words of the form. */
 export function assumedWhat(field: string, body: ValuationBody): string {
   if (field === '/readability') return 'How finely the balance reads';
+  if (field.startsWith('/quotes/')) return 'The quote';
   const index = /^\/contents\/(\d+)\/uncertainty/.exec(field)?.[1];
   const metal = index && body.contents[Number.parseInt(index, 10)]?.metal;
   const name = metal && METAL_NAMES[metal as keyof typeof METAL_NAMES];
