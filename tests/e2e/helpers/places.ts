@@ -1,7 +1,7 @@
 import type { Page } from 'playwright-core';
 import { certificateId, dealCode, draftCode, lotCode } from './database.ts';
 
-export type Reader = 'nobody' | 'newcomer' | 'hale' | 'bruna' | 'ilse' | 'wren' | 'desk' | 'admin';
+export type Reader = 'nobody' | 'newcomer' | 'hale' | 'bruna' | 'ilse' | 'wren' | 'desk' | 'desk2' | 'admin';
 
 export type Place = {
   name: string;
@@ -169,10 +169,14 @@ const memberPlaces: Place[] = [
 const deskPlaces: Place[] = [
   { name: 'desk queue', route: '/desk', reader: 'desk', address: '/desk' },
   {
-    name: 'desk case with its flags, deciding',
+    name: 'desk case with its flags, verification refused',
     route: '/desk/certificates/:id',
-    reader: 'desk',
+    reader: 'desk2',
     address: async () => `/desk/certificates/${await certificateId('Gold button, sample sent in')}`,
+    act: async (page) => {
+      await page.getByRole('radio', { name: 'Verify' }).check();
+      await pressAndFail('Verify the certificate')(page);
+    },
   },
   {
     name: 'desk case waiting',
