@@ -4,6 +4,7 @@ import userEvent from '@testing-library/user-event';
 import { http, HttpResponse } from 'msw';
 import { createMemoryRouter, RouterProvider } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { sampleMember } from '#tests/helpers/sample-deal.ts';
 import { apiServer } from '#tests/setup/api-server.ts';
 import { queryClient } from '../lib/query-client.ts';
 import { chooseTheme } from '../lib/theme.ts';
@@ -65,6 +66,15 @@ describe('the layout', () => {
     await screen.findByRole('heading', { level: 1 });
     expect(screen.queryByRole('link', { name: 'Deals' })).toBeNull();
     expect(screen.queryByRole('link', { name: 'Desk' })).toBeNull();
+    expect(screen.queryByRole('link', { name: 'Sell' })).toBeNull();
+  });
+
+  it('leads members to what they sell and to their deals', async () => {
+    const member = sampleMember();
+    apiServer.use(http.get('/api/v1/session', () => HttpResponse.json({ csrfToken: 't', member })));
+    open('/');
+    expect(await screen.findByRole('link', { name: 'Sell' })).toHaveAttribute('href', '/sell');
+    expect(screen.getByRole('link', { name: 'Deals' })).toHaveAttribute('href', '/deals');
   });
 
   it('answers an unknown address with the way out, and moves the focus to the new heading', async () => {

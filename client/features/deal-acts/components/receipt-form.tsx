@@ -61,7 +61,7 @@ export function ReceiptForm({ deal, onClose }: ReceiptFormProps) {
           id={form.fieldId('mass')}
           label="Received mass"
           error={form.errorOf('mass')}
-          className="min-w-40 grow"
+          className="min-w-40 grow basis-40"
           beside={typed.input && <OtherUnits entry={typed.input} />}
         >
           {(ties) => (

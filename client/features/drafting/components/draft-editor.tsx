@@ -23,7 +23,7 @@ import { SaveLine } from './save-line.tsx';
 import { SubmitQuestion } from './submit-question.tsx';
 
 /** On a narrow screen the bar is one row of buttons, so that it hides no field. */
-const compact = 'max-sm:min-h-9 max-sm:px-3 max-sm:py-1 max-sm:text-note';
+const compact = 'max-sm:min-h-9 max-sm:px-2 max-sm:py-1 max-sm:text-note';
 
 type DraftEditorProps = {
   lot: LotAnswer;

@@ -24,12 +24,12 @@ export function SaveLine({ state, onSave }: SaveLineProps) {
     <div className="contents sm:flex sm:flex-wrap sm:items-center sm:gap-x-4 sm:gap-y-1">
       <Button
         look="second"
-        className="max-sm:min-h-9 max-sm:px-3 max-sm:py-1 max-sm:text-note"
+        className="max-sm:min-h-9 max-sm:px-2 max-sm:py-1 max-sm:text-note"
         disabled={state.kind === 'conflict'}
         busy={state.kind === 'saving'}
         onClick={onSave}
       >
-        Save<span className="sr-only sm:not-sr-only"> the draft</span>
+        Save the draft
       </Button>
       <span role="status" className="text-note text-ink-2 max-sm:w-full">
         <SaveWords state={state} />
