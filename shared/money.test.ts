@@ -49,7 +49,10 @@ describe('currency', () => {
     // ISO 4217 List One: JPY has no minor unit (0), and the metals' codes XAU, XAG, XPT and XPD have none at all ("N.A.",
     // literal text): neither may ever reach arithmetic in hundredths. XAU's row and JPY's digits are read second-hand.
     for (const code of ['JPY', 'XAU', 'XAG', 'XPT', 'XPD']) {
-      expect(codeOf(() => money(code, 1n)), code).toBe('currency-not-supported');
+      expect(
+        codeOf(() => money(code, 1n)),
+        code,
+      ).toBe('currency-not-supported');
     }
     expect(money('USD', 5n)).toEqual(usd(5n));
     expect(codeOf(() => add(usd(1n), euros))).toBe('currency-mismatch');
