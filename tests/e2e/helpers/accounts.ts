@@ -29,6 +29,8 @@ export async function signUp(page: Page, { email, password, name, region }: Newc
   await page.goto('/');
   await page.getByRole('link', { name: 'Sign in' }).first().click();
   await page.getByRole('link', { name: 'Sign up' }).click();
+  // The page before has fields of the same names.
+  await page.getByRole('heading', { name: 'Sign up', level: 1 }).waitFor();
   await page.getByRole('textbox', { name: 'E-mail' }).fill(email);
   await page.getByLabel('Password').fill(password);
   await page.getByRole('textbox', { name: 'Name' }).fill(name);
