@@ -12,6 +12,7 @@ import { webhookRoutes } from '#server/features/provider-events/webhook-routes.t
 import { feeRoutes } from '#server/features/fees/fee-routes.ts';
 import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
 import { lotRoutes } from '#server/features/lots/lot-routes.ts';
+import { mailRoutes } from '#server/features/mails/mail-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
 import { receiptRoutes } from '#server/features/receipts/receipt-routes.ts';
 import { registerRoutes } from '#server/features/register/register-routes.ts';
@@ -29,6 +30,7 @@ const productRoutes: readonly RouteDefinition[] = [
   ...caseRoutes,
   ...deskMemberRoutes,
   ...auditRoutes,
+  ...mailRoutes,
   ...onboardingRoutes,
   ...paymentRoutes,
   ...webhookRoutes,

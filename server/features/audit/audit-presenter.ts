@@ -5,9 +5,10 @@ import type { AuditPage } from './audit-queries.ts';
 /** The words by which a person knows the subject; its id where there are none. */
 function subjectText(entry: AuditEntry, names: ReadonlyMap<string, string>): string {
   const { subjectKind, subjectId, detail } = entry;
-  const said = detail as { lot?: unknown; name?: unknown };
+  const said = detail as { lot?: unknown; name?: unknown; mail?: unknown };
   if (subjectKind === 'certificate' && typeof said.lot === 'string') return `certificate of lot ${said.lot}`;
   if (subjectKind === 'laboratory' && typeof said.name === 'string') return `laboratory ${said.name}`;
+  if (subjectKind === 'mail' && typeof said.mail === 'string') return `mail ${said.mail}`;
   const name = subjectKind === 'member' ? names.get(subjectId) : undefined;
   return `${subjectKind.replaceAll('_', ' ')} ${name ?? subjectId}`;
 }

@@ -12,6 +12,7 @@ export const AUDIT_SUBJECTS = [
   'quote',
   'fee_schedule',
   'file',
+  'mail',
 ] as const;
 export type AuditSubject = (typeof AUDIT_SUBJECTS)[number];
 
