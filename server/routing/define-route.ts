@@ -43,7 +43,10 @@ export type RouteDefinition<P = unknown, Q = unknown, B = unknown> = {
   limit: RateLimitName;
   /** True where the call moves money: the Idempotency-Key header is then required. */
   movesMoney?: boolean;
-  /** True for what a suspended member may still do beside reading: leave. */
+  /**
+   * True for what a suspended member may still do beside reading: leave, and bring deals that were paid before to their end,
+   * since the other side relies on it.
+   */
   whileSuspended?: boolean;
   /** Only for signed webhooks and public calculations. */
   csrf?: 'exempt';

@@ -114,6 +114,7 @@ const actRoutes: RouteDefinition[] = [
     summary: 'The seller has shipped: carrier, tracking number, insured value',
     access: 'member',
     limit: 'write',
+    whileSuspended: true,
     params: dealParams,
     body: shipRequest,
     answer: dealAnswer,
@@ -129,6 +130,7 @@ const actRoutes: RouteDefinition[] = [
     summary: 'The buyer confirms a delivery without signature',
     access: 'member',
     limit: 'write',
+    whileSuspended: true,
     params: dealParams,
     answer: dealAnswer,
     handle: async ({ params, actor, res }) => {
@@ -142,6 +144,7 @@ const actRoutes: RouteDefinition[] = [
     access: 'member',
     limit: 'write',
     movesMoney: true,
+    whileSuspended: true,
     params: dealParams,
     answer: dealAnswer,
     handle: async ({ params, actor, idempotency, res }) => {
@@ -163,6 +166,7 @@ const actRoutes: RouteDefinition[] = [
     summary: 'The buyer contests: the money stays held until the desk has ruled',
     access: 'member',
     limit: 'write',
+    whileSuspended: true,
     params: dealParams,
     body: contestRequest,
     answer: dealAnswer,
