@@ -128,6 +128,40 @@ describe('the signature', () => {
   });
 });
 
+describe('a message that cannot be dealt with', () => {
+  const eventOf = (id: string, objectId: string) =>
+    JSON.stringify({
+      id,
+      object: 'event',
+      type: 'checkout.session.completed',
+      created: 1,
+      data: { object: { id: objectId } },
+    });
+
+  it.each([
+    ['a very long id', `evt_${'x'.repeat(200)}`, 'cs_test_1'],
+    ['an empty id', '', 'cs_test_1'],
+    ['an id with blanks', 'evt 1', 'cs_test_1'],
+    ['an object with a very long id', 'evt_long_object', `cs_${'x'.repeat(200)}`],
+  ])('is refused for %s and not kept', async (_name, id, objectId) => {
+    const before = await ProviderEvent.count();
+    const body = eventOf(id, objectId);
+    const answer = await send(body, signatureOf(body));
+    expect(answer.status).toBe(400);
+    expect(await answer.json()).toMatchObject({ code: 'malformed-request' });
+    expect(await ProviderEvent.count()).toBe(before);
+  });
+
+  it('is kept as ignored when the provider itself does not know its object', async () => {
+    const id = `evt_${randomUUID()}`;
+    const body = eventOf(id, 'cs_test_nobody_knows');
+    const answer = await send(body, signatureOf(body));
+    expect([answer.status, await outcomeOf(answer)]).toEqual([200, 'ignored']);
+    expect((await ProviderEvent.findByPk(id, { rejectOnEmpty: true })).outcome).toBe('ignored');
+    expect(await outcomeOf(await send(body, signatureOf(body)))).toBe('duplicate');
+  });
+});
+
 describe('one message', () => {
   it('has one effect when it comes ten times in parallel', async () => {
     const { deal, body, event } = await paidSilently();
