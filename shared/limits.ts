@@ -1,8 +1,8 @@
 /** Every limit that a person can run into, in one place; the documents quote this file. */
 export const RATE_LIMITS = {
-  /** Tries at one account from one address. */
+  /** Failed tries at one account from one address. */
   'sign-in': { windowSeconds: 900, requestsMax: 10 },
-  /** Tries from one address at any accounts: one password tried on many of them. */
+  /** Failed tries from one address at any accounts: one password tried on many of them. */
   'sign-in-address': { windowSeconds: 900, requestsMax: 60 },
   'sign-up': { windowSeconds: 3600, requestsMax: 20 },
   valuation: { windowSeconds: 60, requestsMax: 60 },

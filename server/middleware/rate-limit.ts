@@ -4,6 +4,9 @@ import { RATE_LIMITS, type RateLimitName } from '#shared/limits.ts';
 import { AppError } from '#server/app-error.ts';
 import { env } from '#server/env.ts';
 
+/** What is limited here is guessing: whoever signs in has not guessed. */
+const FAILURES_ONLY: readonly RateLimitName[] = ['sign-in', 'sign-in-address'];
+
 const handlers = new Map<RateLimitName, RequestHandler>();
 
 /**
@@ -20,6 +23,7 @@ export function rateLimited(name: RateLimitName): RequestHandler {
     standardHeaders: 'draft-8',
     legacyHeaders: false,
     identifier: name,
+    skipSuccessfulRequests: FAILURES_ONLY.includes(name),
     keyGenerator: (req) => {
       const address = ipKeyGenerator(req.ip ?? 'unknown');
       const email: unknown = (req.body as { email?: unknown } | undefined)?.email;
