@@ -205,6 +205,13 @@ const REFUSED: [string, Change, string[]][] = [
     ['country-unknown at /destinations/0'],
   ],
   [
+    'a destination that no country has',
+    (it) => {
+      it.destinations = ['US', 'ZZ'];
+    },
+    ['country-unknown at /destinations/1'],
+  ],
+  [
     'a destination twice',
     (it) => {
       it.destinations = ['US', 'US'];

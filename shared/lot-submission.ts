@@ -8,7 +8,8 @@ import {
   SHIPPING_MINOR_MAX,
   TITLE_LENGTH_MAX,
 } from './limits.ts';
-import { fromAmount, minorToAmount } from './money.ts';
+import { isCountryCode } from './countries.ts';
+import { fromAmount, groupThousands, minorToAmount } from './money.ts';
 import type { MassEntry } from './mass.ts';
 import { parseCertificate, type ParsedCertificate } from './lot-certificate.ts';
 import { readContent, readMass } from './lot-contents.ts';
@@ -200,14 +201,14 @@ export function checkPrice(minor: bigint): void {
     throw new MeasureError(
       'price-too-low',
       '/price',
-      `The lowest price is US$ ${minorToAmount(PRICE_MINOR_MIN)}.`,
+      `The lowest price is US$ ${groupThousands(minorToAmount(PRICE_MINOR_MIN))}.`,
     );
   }
   if (minor > PRICE_MINOR_MAX) {
     throw new MeasureError(
       'price-too-high',
       '/price',
-      `The highest price is US$ ${minorToAmount(PRICE_MINOR_MAX)}: more than that a card cannot pay.`,
+      `The highest price is US$ ${groupThousands(minorToAmount(PRICE_MINOR_MAX))}: more than that a card cannot pay.`,
     );
   }
 }
@@ -220,7 +221,7 @@ function readShipping(text: string): bigint {
     throw new MeasureError(
       'too-large',
       '/shipping',
-      `The highest charge for a parcel is US$ ${minorToAmount(SHIPPING_MINOR_MAX)}.`,
+      `The highest charge for a parcel is US$ ${groupThousands(minorToAmount(SHIPPING_MINOR_MAX))}.`,
     );
   }
   return minor;
@@ -232,8 +233,8 @@ function readDestinations(codes: readonly string[]): string[] {
     issues.add('destinations-missing', '/destinations', 'Choose at least one country that you ship to.');
   }
   codes.forEach((code, index) => {
-    if (!/^[A-Z]{2}$/.test(code)) {
-      issues.add('country-unknown', `/destinations/${index}`, 'Use two capital letters, such as US.');
+    if (!isCountryCode(code)) {
+      issues.add('country-unknown', `/destinations/${index}`, 'No country has this code; US is one that is.');
     } else if (codes.indexOf(code) !== index) {
       issues.add('country-repeated', `/destinations/${index}`, `${code} is chosen twice.`);
     }

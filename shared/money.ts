@@ -97,6 +97,13 @@ export function minorToAmount(minor: bigint): string {
   return fixed(dec(minor).div(100), 2);
 }
 
+/** A plain decimal text with its whole part in groups of three: '1234567.89' gives '1,234,567.89'. For sentences. */
+export function groupThousands(number: string): string {
+  const [whole = '', decimals] = number.split('.');
+  const head = whole.replace(/\B(?=(\d{3})+$)/g, ',');
+  return decimals === undefined ? head : `${head}.${decimals}`;
+}
+
 /**
  * Reads an amount in US dollars: a plain decimal with at most two digits after the dot.
  * Throws MeasureError of `parseDecimal`, or `too-large` beyond `AMOUNT_MAX_MINOR` either way.

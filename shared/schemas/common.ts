@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { isCountryCode } from '../countries.ts';
 
 // A strict content policy forbids `eval`, which zod would otherwise probe for.
 z.config({ jitless: true });
@@ -29,5 +30,5 @@ export type WeightUnit = z.infer<typeof weightUnitSchema>;
 export const METAL_SYMBOLS = ['Au', 'Ag', 'Pt', 'Pd'] as const;
 export const metalSchema = z.enum(METAL_SYMBOLS);
 
-/** ISO 3166-1 alpha-2, or the invented regions of the demo; compared with a lot's destinations. */
-export const countryCode = z.string().regex(/^[A-Z]{2}$/, 'Two capital letters, such as US');
+/** An assigned code of ISO 3166-1 alpha-2; compared with a lot's destinations. */
+export const countryCode = z.string().refine(isCountryCode, 'Use a country’s two-letter code, such as US');

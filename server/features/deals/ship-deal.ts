@@ -1,6 +1,6 @@
 import { UniqueConstraintError } from 'sequelize';
 import { MeasureError } from '#shared/domain-error.ts';
-import { fromAmount, minorToAmount } from '#shared/money.ts';
+import { fromAmount, groupThousands, minorToAmount } from '#shared/money.ts';
 import type { ShipRequest } from '#shared/schemas/deals.ts';
 import { ConflictError, InvalidError } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
@@ -24,7 +24,7 @@ function readInsured(text: string, priceMinor: bigint): bigint {
     throw new InvalidError([{ pointer, code: error.code, message: error.message }]);
   }
   if (minor >= priceMinor) return minor;
-  const message = `Insure it for the price of the metal at least: US$ ${minorToAmount(priceMinor)}`;
+  const message = `Insure it for the price of the metal at least: US$ ${groupThousands(minorToAmount(priceMinor))}`;
   throw new InvalidError([{ pointer, code: 'insured-too-low', message }]);
 }
 

@@ -1,7 +1,8 @@
+import { COUNTRY_CODES } from '#shared/countries.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { Fieldset } from '../../../components/ui/field.tsx';
 import { Checkbox, Select } from '../../../components/ui/inputs.tsx';
-import { countriesByName, COUNTRY_CODES, countryName } from '../../../lib/countries.ts';
+import { countriesByName, countryName } from '../../../lib/countries.ts';
 import { fieldIdOf } from '../../../components/lot-form/field-ids.ts';
 import { useDraftForm } from '../../../components/lot-form/draft-form-context.ts';
 

@@ -1,11 +1,12 @@
 import { useState, type SubmitEvent } from 'react';
+import { COUNTRY_CODES } from '#shared/countries.ts';
 import { MASS_UNIT_LABELS } from '#shared/mass.ts';
 import { READING_UNITS, type ReadingUnit } from '#shared/mass-in-units.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { useErrorTitle } from '../../../components/ui/error-summary.tsx';
 import { Field } from '../../../components/ui/field.tsx';
 import { NumberInput, Select } from '../../../components/ui/inputs.tsx';
-import { COUNTRY_CODES, countriesByName } from '../../../lib/countries.ts';
+import { countriesByName } from '../../../lib/countries.ts';
 import { useReader } from '../../../lib/reader-context.ts';
 import { BOUND_FIELDS, BOUND_NAMES, type BoundField, type RegisterFilters } from '../register-filters.ts';
 import { readBounds, type BoundErrors, type TypedBounds } from '../typed-bounds.ts';
