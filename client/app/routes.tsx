@@ -17,6 +17,7 @@ export const pageRoutes: RouteObject[] = [
   { path: '/desk/laboratories', lazy: () => import('../routes/desk-laboratories.tsx') },
   { path: '/desk/members', lazy: () => import('../routes/desk-members.tsx') },
   { path: '/desk/audit', lazy: () => import('../routes/desk-audit.tsx') },
+  { path: '/admin/mails', lazy: () => import('../routes/admin-mails.tsx') },
   { path: '/deals', lazy: () => import('../routes/deals.tsx') },
   { path: '/deals/:code', lazy: () => import('../routes/deal.tsx') },
   { path: '/deals/:code/payment', lazy: () => import('../routes/payment-return.tsx') },

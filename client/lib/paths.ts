@@ -17,6 +17,7 @@ export const paths = {
   deskLaboratories: () => '/desk/laboratories',
   deskMembers: (query?: string) => (query ? `/desk/members?query=${segment(query)}` : '/desk/members'),
   deskAudit: () => '/desk/audit',
+  adminMails: () => '/admin/mails',
   quotes: () => '/quotes',
   worth: () => '/worth',
   methods: () => '/methods',

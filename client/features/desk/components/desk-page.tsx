@@ -7,6 +7,11 @@ import { useMember } from '../../../lib/session.ts';
 
 type DeskPageProps = { title: string; heading?: ReactNode; sub?: ReactNode; children: ReactNode };
 
+const adminRooms = [
+  { to: paths.deskAudit(), name: 'Audit trail' },
+  { to: paths.adminMails(), name: 'Mails' },
+];
+
 /** A page of the desk, with the ways to the others. */
 export function DeskPage({ children, ...page }: DeskPageProps) {
   const member = useMember();
@@ -15,7 +20,7 @@ export function DeskPage({ children, ...page }: DeskPageProps) {
     { to: paths.deskDeals(), name: 'Contested deals' },
     { to: paths.deskLaboratories(), name: 'Laboratories' },
     { to: paths.deskMembers(), name: 'Members' },
-    ...(member?.role === 'admin' ? [{ to: paths.deskAudit(), name: 'Audit trail' }] : []),
+    ...(member?.role === 'admin' ? adminRooms : []),
   ];
   return (
     <>
