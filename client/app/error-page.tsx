@@ -4,6 +4,7 @@ import { ErrorState } from '../components/ui/error-state.tsx';
 import { Page } from '../components/ui/page.tsx';
 import { ApiProblem } from '../lib/api-client.ts';
 import { paths } from '../lib/paths.ts';
+import { useMember } from '../lib/session.ts';
 
 function statusOf(error: unknown): number | null {
   if (error instanceof ApiProblem || isRouteErrorResponse(error)) return error.status;
@@ -16,6 +17,7 @@ export function ErrorPage() {
   const status = statusOf(error);
   if (status === 404) return <MissingPage />;
   if (status === 401) return <SignInNeeded />;
+  if (status === 403) return <NotYours error={error} />;
   return (
     <Page title="This page could not be shown">
       <ErrorState error={error} onRetry={() => window.location.reload()} />
@@ -45,6 +47,24 @@ function SignInNeeded() {
       <LinkButton to={paths.signIn(here)} className="mt-6">
         Sign in
       </LinkButton>
+    </Page>
+  );
+}
+
+/** Asking again would be refused again: the way out leads to what is open to this account. */
+function NotYours({ error }: { error: unknown }) {
+  const canUseDesk = useMember()?.can.useDesk ?? false;
+  return (
+    <Page title="This page is not open to your account">
+      <p className="max-w-prose text-ink-2">
+        {error instanceof ApiProblem ? error.detail : 'It is kept for others.'}
+      </p>
+      <div className="mt-6 flex flex-wrap gap-3">
+        {canUseDesk && <LinkButton to={paths.desk()}>Go to the desk</LinkButton>}
+        <LinkButton look={canUseDesk ? 'second' : 'main'} to={paths.home()}>
+          Go to the first page
+        </LinkButton>
+      </div>
     </Page>
   );
 }

@@ -4,6 +4,7 @@ import userEvent from '@testing-library/user-event';
 import { http, HttpResponse } from 'msw';
 import { createMemoryRouter, RouterProvider } from 'react-router-dom';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { buildRow } from '#tests/factories/build-market-answers.ts';
 import { sampleMember } from '#tests/helpers/sample-deal.ts';
 import { apiServer } from '#tests/setup/api-server.ts';
 import { queryClient } from '../lib/query-client.ts';
@@ -84,6 +85,29 @@ describe('the layout', () => {
     const heading = await screen.findByRole('heading', { name: 'Nothing is filed under this address' });
     expect(heading).toHaveFocus();
     expect(screen.getByRole('link', { name: 'Go to the first page' })).toHaveAttribute('href', '/');
+  });
+
+  it('leads the desk back from a page that is kept for admins, instead of asking again', async () => {
+    const member = { ...sampleMember(), role: 'desk' as const };
+    member.can = { ...member.can, useDesk: true };
+    apiServer.use(
+      http.get('/api/v1/session', () => HttpResponse.json({ csrfToken: 't', member })),
+      http.get('/api/v1/admin/audit', () =>
+        HttpResponse.json({ code: 'forbidden', title: 'Not allowed' }, { status: 403 }),
+      ),
+    );
+    open('/desk/audit');
+    await screen.findByRole('heading', { name: 'This page is not open to your account' });
+    expect(screen.getByRole('link', { name: 'Go to the desk' })).toHaveAttribute('href', '/desk');
+    expect(screen.queryByRole('button', { name: 'Try again' })).toBeNull();
+  });
+
+  it('says on the first page that there is no quote, beside the lots', async () => {
+    const rows = [buildRow('S-2K7F4Q', { melt: null, percentOfMelt: null })];
+    apiServer.use(http.get('/api/v1/lots', () => HttpResponse.json({ ...noLots, rows })));
+    open('/');
+    expect(await screen.findByText('There is no quote')).toBeVisible();
+    expect(screen.queryByText(/as it stands now/)).toBeNull();
   });
 
   it('sets the theme and goes back to the system’s', async () => {

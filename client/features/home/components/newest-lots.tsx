@@ -5,6 +5,7 @@ import { Fineness } from '../../../components/figures/fineness.tsx';
 import { formName, lotForms } from '../../../components/figures/lot-words.tsx';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
 import { Money } from '../../../components/figures/money.tsx';
+import { QuoteStateNotice } from '../../../components/figures/quote-state-notice.tsx';
 import { Quantity } from '../../../components/figures/quantity.tsx';
 import { SpecimenDrawing } from '../../../components/figures/specimen-drawing.tsx';
 import { EmptyState } from '../../../components/ui/empty-state.tsx';
@@ -89,7 +90,7 @@ export function NewestLots({ lots }: { lots: UseQueryResult<RegisterAnswer> }) {
   if (lots.isPending) return <Skeleton lines={5} label="Loading the newest lots" />;
   if (lots.isError && !lots.data)
     return <ErrorState error={lots.error} what="The register" onRetry={() => void lots.refetch()} />;
-  const { rows, quotedAt } = lots.data;
+  const { rows, quotedAt, quoteState } = lots.data;
   if (rows.length === 0)
     return (
       <EmptyState title="No lot is open today" drawing={<SpecimenDrawing form="grain" label={null} />}>
@@ -97,10 +98,13 @@ export function NewestLots({ lots }: { lots: UseQueryResult<RegisterAnswer> }) {
       </EmptyState>
     );
   return (
-    <ul className="border-t border-ink">
-      {rows.map((row) => (
-        <Line key={row.code} row={row} quotedAt={quotedAt} />
-      ))}
-    </ul>
+    <>
+      <QuoteStateNotice state={quoteState} at={quotedAt} className="mb-4" />
+      <ul className="border-t border-ink">
+        {rows.map((row) => (
+          <Line key={row.code} row={row} quotedAt={quotedAt} />
+        ))}
+      </ul>
+    </>
   );
 }

@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { lazy, Suspense } from 'react';
 import { Link } from 'react-router-dom';
+import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { SettlementSheetView } from '../../../components/figures/settlement-sheet-view.tsx';
 import { Skeleton } from '../../../components/ui/skeleton.tsx';
 import { paths } from '../../../lib/paths.ts';
@@ -10,6 +11,14 @@ import { shownLotQuery } from '../api/shown-lot-query.ts';
 const WorkedExample = lazy(() =>
   import('./worked-example.tsx').then((module) => ({ default: module.WorkedExample })),
 );
+
+const asItStands: Readonly<Record<LotAnswer['quoteState'], string>> = {
+  fresh: ', as it stands now.',
+  partly: ', partly at quotes that are not fresh; its figures may have moved since.',
+  stale: ', at the last accepted quotes, which are not fresh; its figures may have moved since.',
+  closed: ', at the last quotes before the market closed.',
+  none: ', at the quotes that the sheet names; there is none now.',
+};
 
 function Example() {
   return (
@@ -31,7 +40,7 @@ function SheetOfLot({ code }: { code: string }) {
         <Link to={paths.lot(code)} className="link">
           {data.title}
         </Link>
-        , as it stands now.
+        {asItStands[data.quoteState]}
       </p>
     </>
   );

@@ -18,7 +18,7 @@ import { LotPricePanel } from './lot-price-panel.tsx';
 import { stateWord } from '../../../components/figures/lot-state-words.ts';
 import { sheetQuotedAt } from './lot-words.ts';
 import { PhotoViewer } from './photo-viewer.tsx';
-import { QuoteStateNotice } from './quote-state-notice.tsx';
+import { QuoteStateNotice } from '../../../components/figures/quote-state-notice.tsx';
 import { lotFormOf } from './register-row-parts.tsx';
 import { SellerNets } from './seller-nets.tsx';
 

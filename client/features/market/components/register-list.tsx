@@ -11,7 +11,7 @@ import { Skeleton } from '../../../components/ui/skeleton.tsx';
 import { registerQuery } from '../api/register-query.ts';
 import { useWide } from '../hooks/use-wide.ts';
 import { isNarrowed, registerHref, plainFilters, type RegisterFilters } from '../register-filters.ts';
-import { QuoteStateNotice } from './quote-state-notice.tsx';
+import { QuoteStateNotice } from '../../../components/figures/quote-state-notice.tsx';
 import { rowMarks } from './register-row-parts.tsx';
 import { RegisterTable } from './register-table.tsx';
 import { RegisterTickets } from './register-tickets.tsx';

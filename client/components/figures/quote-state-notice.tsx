@@ -1,6 +1,6 @@
 import type { RegisterAnswer } from '#shared/schemas/lots.ts';
-import { Notice } from '../../../components/ui/notice.tsx';
-import { Time } from '../../../components/ui/time.tsx';
+import { Notice } from '../ui/notice.tsx';
+import { Time } from '../ui/time.tsx';
 
 type QuoteStateNoticeProps = { state: RegisterAnswer['quoteState']; at: string | null; className?: string };
 
