@@ -29,7 +29,7 @@ export function EvidencePart() {
       source="what a laboratory’s report states, ISO/IEC 17025:2017, clause 7.8.2.1; the grades are a rule of this house."
     >
       <FigureTable
-        caption="Evidence grades"
+        caption="The grades and what each means"
         heads={[{ text: 'grade' }, { text: 'means' }]}
         rows={EVIDENCE_GRADES.map((grade) => ({
           key: grade,
