@@ -64,15 +64,15 @@ export function DealPage({ code, Register }: DealPageProps) {
           The last look at the deal did not succeed. It is tried again by itself.
         </Notice>
       )}
-      <div className="grid gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,5fr)_minmax(0,3fr)]">
+      <div className="grid gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,5fr)_minmax(0,3fr)] lg:grid-rows-[auto_1fr]">
         <Register deal={deal} />
-        <div className="flex min-w-0 flex-col gap-6">
+        <div className="flex min-w-0 flex-col gap-6 lg:col-start-2 lg:row-span-2 lg:row-start-1">
           <DealOutcome deal={deal} />
           <DealSums deal={deal} />
           <DealParcel deal={deal} />
         </div>
+        <DealPapers deal={deal} />
       </div>
-      <DealPapers deal={deal} />
     </Page>
   );
 }

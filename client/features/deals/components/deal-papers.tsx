@@ -6,7 +6,7 @@ export function DealPapers({ deal }: { deal: DealAnswer }) {
   const pdf = `/api/v1/deals/${encodeURIComponent(deal.code)}/sheet.pdf`;
   const side = deal.side === 'desk' ? ', the seller’s' : '';
   return (
-    <section aria-labelledby="deal-papers" className="mt-10 border-t border-rule pt-8">
+    <section aria-labelledby="deal-papers" className="min-w-0 border-t border-rule pt-8">
       <div className="mb-4 flex flex-wrap items-baseline justify-between gap-x-8 gap-y-2">
         <h2 id="deal-papers">Sheets and documents</h2>
         <ul className="no-print flex flex-wrap gap-x-6 gap-y-1">
@@ -29,7 +29,7 @@ export function DealPapers({ deal }: { deal: DealAnswer }) {
           )}
         </ul>
       </div>
-      <div className={`grid gap-8 ${deal.finalSheet ? 'lg:grid-cols-2' : 'max-w-2xl'}`}>
+      <div className="flex flex-col gap-8">
         {deal.finalSheet && <SettlementSheetView sheet={deal.finalSheet} title={`Final sheet${side}`} />}
         <SettlementSheetView sheet={deal.provisionalSheet} title={`Provisional sheet${side}`} />
       </div>
