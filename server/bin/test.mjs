@@ -54,8 +54,10 @@ async function vitest(project) {
 async function buildClient() {
   if (isInterrupted) return;
   const startedAt = performance.now();
+  // The products of the tests serve this build and leave the one alone that may be in use.
+  process.env.SCRUPLE_CLIENT_DIR = path.join(reports, 'client');
   try {
-    await ensureClient();
+    await ensureClient(process.env.SCRUPLE_CLIENT_DIR);
     count('client build', { passed: 1, failed: 0 }, startedAt);
   } catch (error) {
     complain(error);

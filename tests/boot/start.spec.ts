@@ -35,7 +35,12 @@ afterEach(async () => {
 });
 
 async function start(env: Record<string, string> = {}) {
-  const product = await startProduct({ dataFolder, env: { SCRUPLE_DEMO: 'no', ...env } });
+  // One build for all that start here, unless the whole run brings one along.
+  const SCRUPLE_CLIENT_DIR = process.env.SCRUPLE_CLIENT_DIR ?? path.join(folder, 'client');
+  const product = await startProduct({
+    dataFolder,
+    env: { SCRUPLE_DEMO: 'no', SCRUPLE_CLIENT_DIR, ...env },
+  });
   running.push(product);
   return product;
 }
@@ -108,6 +113,18 @@ describe('npm start', () => {
     expect(performance.now() - before).toBeLessThan(10_000);
     await expectReady(second);
     expect(await keptRows(second)).toEqual([{ id: 7 }]);
+  });
+
+  it('serves a page, answers unknown addresses with the page and 404, and builds in its own folder', async () => {
+    const builtHere = path.join(dataFolder, 'client', 'index.html');
+    const product = await start({ SCRUPLE_CLIENT_DIR: '' });
+    const page = await fetch(`${product.ready.urls.product}/lots/S-2K7F4Q`);
+    expect(page.status).toBe(200);
+    expect(await page.text()).toBe(readFileSync(builtHere, 'utf8'));
+    const unknown = await fetch(`${product.ready.urls.product}/nowhere/at/all`);
+    expect(unknown.status).toBe(404);
+    expect(await unknown.text()).toBe(readFileSync(builtHere, 'utf8'));
+    expect(readdirSync(dataFolder).filter((name) => name.startsWith('client'))).toEqual(['client']);
   });
 
   it('leaves a run alone that is alive, and says where it is', async () => {

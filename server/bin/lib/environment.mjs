@@ -1,6 +1,6 @@
 import { existsSync } from 'node:fs';
 import path from 'node:path';
-import { inData, root } from './paths.mjs';
+import { clientFolder, inData, root } from './paths.mjs';
 
 /** Reads `.env` where there is one; what the environment says already wins. */
 export function loadSettingsFile() {
@@ -46,6 +46,7 @@ export function productEnvironment({ ports, secrets, mode }) {
     CARRIER_URL: urls.carrier,
     CARRIER_API_KEY: secrets.carrierApiKey,
     STORAGE_DIR: inData('storage'),
+    CLIENT_DIST_DIR: clientFolder,
     LOG_LEVEL: process.env.LOG_LEVEL || (mode === 'dev' ? 'debug' : 'info'),
     // For the seed and the tests; the product itself reads none of these.
     API_URL: urls.api,

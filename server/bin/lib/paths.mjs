@@ -11,3 +11,6 @@ export const dataFolder = path.resolve(root, process.env.SCRUPLE_DATA_DIR || '.d
 export function inData(...parts) {
   return path.join(dataFolder, ...parts);
 }
+
+/** Where the start puts the client that it serves; tests share one among their products. */
+export const clientFolder = path.resolve(root, process.env.SCRUPLE_CLIENT_DIR || inData('client'));
