@@ -1,3 +1,4 @@
+import type { Page } from 'playwright-core';
 import { describe, expect, inject, it } from 'vitest';
 import { signIn } from './helpers/accounts.ts';
 import { useBrowser } from './helpers/browser.ts';
@@ -6,16 +7,21 @@ import { delivery } from './helpers/purchase-page.ts';
 
 const people = useBrowser();
 
+/** After a change of page inside the client the focus stands at the new heading; Tab goes on from there. */
+const arrive = (page: Page, title: string | RegExp) =>
+  page.getByRole('heading', { name: title, level: 1 }).and(page.locator(':focus')).waitFor();
+
 describe('the keyboard alone', () => {
   it('is enough to find a lot, agree, pay and come back', async () => {
     const page = await people.newVisitor();
     await signIn(page, 'bruna', '/lots');
+    await arrive(page, 'Register of lots');
     await tabTo(page, page.getByRole('link', { name: 'Cast bar, hand-poured' }), 90);
     await page.keyboard.press('Enter');
-    await page.getByRole('heading', { name: 'Cast bar, hand-poured', level: 1 }).waitFor();
+    await arrive(page, 'Cast bar, hand-poured');
     await tabTo(page, page.getByRole('link', { name: /^Buy: US\$/ }));
     await page.keyboard.press('Enter');
-    await page.getByRole('heading', { name: /^Buy: / }).waitFor();
+    await arrive(page, /^Buy: /);
 
     const field = (name: string) => page.getByRole('textbox', { name });
     await typeInto(page, field('Name of who receives it'), delivery.name);
@@ -45,7 +51,7 @@ describe('the keyboard alone', () => {
     await page.getByText(/is held in escrow$/).waitFor();
     await tabTo(page, page.getByRole('link', { name: 'Open the deal' }));
     await page.keyboard.press('Enter');
-    await page.getByRole('heading', { name: /Cast bar, hand-poured/, level: 1 }).waitFor();
+    await arrive(page, /Cast bar, hand-poured/);
   });
 
   it('goes straight to the page past the header, and round the whole of it without a trap', async () => {
