@@ -71,6 +71,20 @@ describe('drafting', () => {
     }
   });
 
+  it('refuses a document that another seller has uploaded, or nobody, and keeps the draft as it was', async () => {
+    const foreign = await buildLot({ state: 'submitted' });
+    const { code, version } = await newDraft();
+    for (const fileId of [foreign.draft.certificate.fileId!, '00000000-0000-7000-8000-00000000dead']) {
+      const draft = lotDraft.parse({ title: 'Taken over', certificate: { fileId } });
+      const { body } = await asSeller.put(`/api/v1/lots/${code}/draft`, { draft, version }).expect(422);
+      expect(body.errors).toMatchObject([{ pointer: '/draft/certificate/fileId', code: 'file-unknown' }]);
+    }
+    expect((await asSeller.get(`/api/v1/lots/${code}`)).body).toMatchObject({
+      version,
+      draft: { title: '' },
+    });
+  });
+
   it('keeps what is typed, right or wrong, and shows the sheet as soon as it can', async () => {
     const { code } = await newDraft();
     const draft = lotDraft.parse({ title: 'Go', gross: { value: '1,2,3', unit: 'stone' } });
@@ -212,11 +226,11 @@ describe('submitting', () => {
     expect((await asSeller.get(`/api/v1/lots/${code}`)).body.state).toBe('draft');
   });
 
-  it('refuses a document that is another member’s', async () => {
+  it('refuses a document that is another member’s, should a draft name one', async () => {
     const other = await buildLot({ state: 'draft' });
-    const { code } = await readyDraft((draft) => {
-      draft.certificate.fileId = other.draft.certificate.fileId;
-    });
+    const { code, draft } = await readyDraft();
+    draft.certificate.fileId = other.draft.certificate.fileId;
+    await Lot.update({ draft }, { where: { code } });
     const { body } = await asSeller.post(`/api/v1/lots/${code}/submit`).expect(422);
     expect(body.errors).toMatchObject([{ pointer: '/certificate/fileId', code: 'file-missing' }]);
   });
