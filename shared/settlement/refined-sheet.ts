@@ -54,7 +54,7 @@ export function refinedSheet(input: RefinedSheetInput): SettlementSheet {
     percentOfMelt: percent,
     shipping: terms.shippingMinor === null ? null : minorToAmount(terms.shippingMinor),
     total: total?.amount ?? null,
-    assumed: measures.assumed,
+    assumed: [...measures.assumed, ...(input.notes ?? [])],
   };
 }
 

@@ -89,6 +89,8 @@ export type RefinedSheetInput = {
   shipping: { amount: string } | null;
   commission: CommissionTerms | null;
   weightStep?: string | undefined;
+  /** What else a reader must know of the input, such as a quote that was old: stands on the sheet as it is. */
+  notes?: AssumedValue[] | undefined;
   moment: SheetMoment;
   audience: SheetAudience;
 };

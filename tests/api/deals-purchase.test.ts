@@ -4,9 +4,10 @@ import { afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { recompute } from '#shared/settlement/recompute.ts';
 import { dealAnswer } from '#shared/schemas/deals.ts';
 import { pinDatabaseTime, withTransaction } from '#server/database/transaction.ts';
+import { newId } from '#server/database/ids.ts';
 import { heldMinor } from '#server/features/ledger/ledger-queries.ts';
 import { purchaseLot } from '#server/features/deals/purchase-lot.ts';
-import { Deal, DealSheet, Lot, Member, Quote } from '#server/models/index.ts';
+import { Deal, DealSheet, Lot, Member, Quote, QuotePoll } from '#server/models/index.ts';
 import { DELIVERY } from '#tests/factories/build-deal.ts';
 import { buildLot, repriceLot } from '#tests/factories/build-lot.ts';
 import { buildMember, type BuiltMember } from '#tests/factories/build-member.ts';
@@ -236,6 +237,30 @@ describe('a stale quote', () => {
     pinDatabaseTime(new Date(Date.now() + 3 * 3600_000));
     const answer = await buy(visitor, lot.code).expect(201);
     expect(answer.body.quotes[0].at).toBe(quote.quotedAt.toISOString());
+    const [note, ...others] = answer.body.provisionalSheet.assumed as { field: string; reason: string }[];
+    expect([note?.field, others]).toEqual(['/quotes/Au', []]);
+    expect(note?.reason).toMatch(/^No fresh quote at agreement: the quote of .+ UTC was [23] hours old\.$/);
+    const deal = await Deal.findOne({ where: { code: answer.body.code }, rejectOnEmpty: true });
+    const sheet = await DealSheet.findOne({ where: { dealId: deal.id }, rejectOnEmpty: true });
+    expect(recompute(sheet.input, sheet.sellerSheet).isEqual).toBe(true);
+  });
+});
+
+describe('a quote of a closed market', () => {
+  it('is named as such on the sheet', async () => {
+    const lot = await buildLot();
+    const poll = await QuotePoll.create({
+      id: newId(),
+      polledAt: new Date(),
+      outcome: 'accepted',
+      marketOpen: false,
+      detail: {},
+    });
+    const answer = await buy(visitor, lot.code).expect(201);
+    await poll.destroy();
+    expect(answer.body.provisionalSheet.assumed).toMatchObject([
+      { field: '/quotes/Au', reason: expect.stringMatching(/^The market was closed at agreement: /) },
+    ]);
   });
 });
 

@@ -148,6 +148,12 @@ describe('SettlementSheetView', () => {
     ).toBeInTheDocument();
   });
 
+  it('says of an old quote that it was old', () => {
+    const reason = 'No fresh quote at agreement: the quote of 2026-12-01, 14:02 UTC was 12 minutes old.';
+    show({ ...sheet, assumed: [{ field: '/quotes/Au', value: 'US$ 4,182.40/oz t', reason }] });
+    expect(screen.getByText(`Quote: US$ 4,182.40/oz t. ${reason}`)).toBeInTheDocument();
+  });
+
   it('says at which moment it stands', () => {
     show({ ...sheet, moment: 'final' });
     expect(screen.getByRole('heading')).toHaveTextContent('final');

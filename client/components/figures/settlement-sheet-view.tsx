@@ -97,7 +97,9 @@ function SheetNotes({ sheet, isOpen }: { sheet: SettlementSheet; isOpen: boolean
       ))}
       {sheet.assumed.length > 0 && (
         <div>
-          <p>Not given, therefore assumed:</p>
+          <p>
+            {sheet.assumed.some(isQuoteNote) ? 'Assumed, or to be known:' : 'Not given, therefore assumed:'}
+          </p>
           <ul className="list-disc pl-5">
             {sheet.assumed.map((item) => (
               <li key={item.field}>
@@ -111,7 +113,12 @@ function SheetNotes({ sheet, isOpen }: { sheet: SettlementSheet; isOpen: boolean
   );
 }
 
+function isQuoteNote({ field }: { field: string }): boolean {
+  return field.startsWith('/quotes/');
+}
+
 function assumedName(field: string): string {
+  if (field.startsWith('/quotes/')) return 'Quote:';
   return field.endsWith('/readability') ? 'Readability of the balance:' : 'Expanded uncertainty:';
 }
 

@@ -1,11 +1,13 @@
 import { MeasureError } from '#shared/domain-error.ts';
 import { minorToAmount } from '#shared/money.ts';
 import { ENGINE_VERSION, refinedSheet } from '#shared/settlement/refined-sheet.ts';
+import { oldQuoteNotes } from '#shared/settlement/old-quote-notes.ts';
 import type { QuoteRef, RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
 import { ConflictError, invariant } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { lotEntryOf, lotSheetInput } from '#server/features/lots/lot-entry.ts';
+import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { DealSheet } from '#server/models/deal-sheet.ts';
 import type { Lot } from '#server/models/lot.ts';
@@ -22,7 +24,7 @@ type Terms = Pick<Deal, 'commissionPercent' | 'commissionMinimumMinor' | 'paymen
 export async function sheetInputFor(
   lot: Lot,
   terms: Terms,
-  quotes: readonly QuoteRef[],
+  board: QuoteBoard,
   unit: Unit,
 ): Promise<RefinedSheetInput> {
   const assays = await LotAssay.findAll({
@@ -37,11 +39,14 @@ export async function sheetInputFor(
     percent: terms.commissionPercent,
     minimum: minorToAmount(terms.commissionMinimumMinor),
   };
-  const used = quotes.filter(({ metal }) => paid.includes(metal));
+  const used = quoteRefs(board).filter(({ metal }) => paid.includes(metal));
+  const isMarketClosed = board.state === 'closed';
+  const isFresh = ({ metal }: QuoteRef) => !isMarketClosed && board.byMetal[metal]?.isFresh === true;
   const input: RefinedSheetInput = {
     ...lotSheetInput(lot, entry, used, commission),
     shipping: { amount: minorToAmount(lot.shippingMinor ?? 0n) },
     moment: 'provisional',
+    notes: oldQuoteNotes(used, { isFresh, isMarketClosed, now: unit.now }),
   };
   assertQuoted(input);
   return input;

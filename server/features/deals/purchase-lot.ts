@@ -17,7 +17,7 @@ import type { Unit } from '#server/database/transaction.ts';
 import { openDealAccounts } from '#server/features/ledger/open-accounts.ts';
 import { currentFees } from '#server/features/fees/fee-queries.ts';
 import { moveLot } from '#server/features/lots/move-lot.ts';
-import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
+import type { QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
@@ -142,7 +142,7 @@ export async function purchaseLot(
   assertTotal(input.total, lot.priceMinor + (lot.shippingMinor ?? 0n));
   const deal = await insertDeal(lot, input, unit, actor);
   await openDealAccounts(deal.id, unit);
-  const sheetInput = await sheetInputFor(lot, deal, quoteRefs(unit.quotes), unit);
+  const sheetInput = await sheetInputFor(lot, deal, unit.quotes, unit);
   await storeDealSheets(deal.id, 'provisional', sheetInput, unit);
   const who = { actorKind: 'buyer', actorId: actor.id } as const;
   await moveLot(lot, 'reserved', { act: 'reserved', ...who, detail: { dealCode: deal.code } }, unit);

@@ -88,6 +88,17 @@ describe('renderSheetPdf', () => {
     expect(pagesOf(await paper('Gold button', long))).toBeGreaterThan(1);
   });
 
+  it('draws the note on an old quote', async () => {
+    const note = {
+      field: '/quotes/Au',
+      value: 'US$ 4,182.40/oz t',
+      reason: 'No fresh quote at agreement: the quote of 2026-12-01, 14:02 UTC was 12 minutes old.',
+    };
+    const plain = drawingOf(await paper('Gold button'));
+    const noted = drawingOf(await paper('Gold button', refinedSheet({ ...input, notes: [note] })));
+    expect(noted.length).toBeGreaterThan(plain.length);
+  });
+
   it('draws a title in any script without a fault', async () => {
     expect(drawingOf(await paper('Łódź 金 button 🙂'))).not.toBe('');
   });

@@ -58,6 +58,7 @@ function withCents(number: string): string {
 }
 
 function assumedName(field: string): string {
+  if (field.startsWith('/quotes/')) return 'Quote:';
   return field.endsWith('/readability') ? 'Assumed readability:' : 'Assumed expanded uncertainty:';
 }
 
