@@ -7,6 +7,7 @@ import { lotAnswer, photoAnswer, type PhotoAnswer } from '#shared/schemas/lots.t
 import { env } from '#server/env.ts';
 import { tidyFileName } from '#server/middleware/receive-file.ts';
 import { Certificate } from '#server/models/certificate.ts';
+import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { LotPhoto } from '#server/models/lot-photo.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
@@ -317,6 +318,11 @@ describe('a certificate’s document', () => {
     expect(await traces()).toEqual(before);
   });
 
+  const documentOf = async (lotId: string) => {
+    const { id } = await Certificate.findOne({ where: { lotId }, rejectOnEmpty: true });
+    return `/api/v1/certificates/${id}/document`;
+  };
+
   it('is read by seller and desk, and by nobody else', async () => {
     const lot = await buildLot({ state: 'open', sellerId: seller.id });
     const { id } = await Certificate.findOne({ where: { lotId: lot.id }, rejectOnEmpty: true });
@@ -341,16 +347,33 @@ describe('a certificate’s document', () => {
   });
 
   it('is read by the buyer from funding on, not before', async () => {
-    for (const [state, status] of [
-      ['agreed', 403],
-      ['funded', 200],
-    ] as const) {
-      const deal = await buildDeal({ state });
-      const certificate = await Certificate.findOne({ where: { lotId: deal.lot.id }, rejectOnEmpty: true });
-      const asBuyer = await app.signIn(deal.buyer);
-      await asBuyer.get(`/api/v1/certificates/${certificate.id}/document`).expect(status);
+    for (const role of ['member', 'desk'] as const) {
+      for (const [state, status] of [
+        ['agreed', 403],
+        ['funded', 200],
+        ['settled', 200],
+      ] as const) {
+        const deal = await buildDeal({ state, buyer: await buildMember({ role }) });
+        await (await app.signIn(deal.buyer)).get(await documentOf(deal.lot.id)).expect(status);
+      }
     }
   });
+
+  it.each(['lapsed', 'cancelled', 'returned', 'reversed'] as const)(
+    'is not read by the buyer of a deal that is %s',
+    async (state) => {
+      const deal = await buildDeal({ state: 'funded' });
+      const asBuyer = await app.signIn(deal.buyer);
+      const url = await documentOf(deal.lot.id);
+      const seen = async () =>
+        (await asBuyer.get(`/api/v1/deals/${deal.code}`).expect(200)).body.certificateUrl;
+      expect(await seen()).toBe(url);
+      await Deal.update({ state, liveLotId: null }, { where: { id: deal.id } });
+      expect(await seen()).toBeNull();
+      await asBuyer.get(url).expect(403);
+      await (await app.signIn(deal.seller)).get(url).expect(200);
+    },
+  );
 });
 
 describe('a file’s name', () => {

@@ -141,10 +141,11 @@ function presentParty({ displayName, region }: DealView['deal']['buyer']): DealA
   return { displayName, region };
 }
 
-/** The document names the seller's address: the buyer gets it once his money is held. */
+/** The document names the seller's address: the buyer gets it once his money is held, and no more once it came back. */
 function certificateUrl(view: DealView, side: DealSide): string | null {
   if (view.certificateId === null) return null;
-  if (side === 'buyer' && view.deal.fundedAt === null) return null;
+  const { fundedAt, state } = view.deal;
+  if (side === 'buyer' && (fundedAt === null || isDealEnded(state))) return null;
   return `/api/v1/certificates/${view.certificateId}/document`;
 }
 

@@ -1,3 +1,4 @@
+import { isDealEnded } from '#shared/deal-states.ts';
 import { canLotBecome, PUBLIC_LOT_STATES, type LotState } from '#shared/lot-states.ts';
 import { isDeskStaff } from '#shared/roles.ts';
 import type { Actor } from '#server/routing/define-route.ts';
@@ -54,15 +55,17 @@ export function canDeleteDraft(viewer: Viewer, lot: LotRow): boolean {
 }
 
 /**
- * A report carries its customer's name and address, so the document is for the seller, the desk, and the buyer from
- * funding on.
+ * A report carries its customer's name and address, so the document is for the seller, the desk, and the buyer while his
+ * money is held or has been paid out: not before funding, and no more once the deal has ended without the lot. Staff who
+ * are a side of a deal are that side.
  */
 export function canReadDocument(
   viewer: Viewer,
   lot: Pick<Lot, 'sellerId'>,
-  deal: Pick<Deal, 'buyerId' | 'fundedAt'> | null,
+  deal: Pick<Deal, 'buyerId' | 'fundedAt' | 'state'> | null,
 ): boolean {
   if (viewer === null) return false;
-  if (isSeller(viewer, lot) || isDeskStaff(viewer.role)) return true;
-  return deal !== null && deal.buyerId === viewer.id && deal.fundedAt !== null;
+  if (isSeller(viewer, lot)) return true;
+  if (deal !== null && deal.buyerId === viewer.id) return deal.fundedAt !== null && !isDealEnded(deal.state);
+  return isDeskStaff(viewer.role);
 }
