@@ -15,6 +15,7 @@ export const dealFundedSeller = defineMail({
   trigger: 'the payment provider confirmed the payment',
   says: 'what is held, ship by when, insured for how much at least, what happens otherwise',
   input,
+  appliesWhile: ['funded'],
   write: ({ dealCode, lotTitle, total, shipBy, deliveryName, deliveryPlace }, { timeZone }) => ({
     subject: `Ship by ${momentText(shipBy, timeZone)}: ${lotTitle}`,
     heading: 'The buyer has paid into escrow',

@@ -1,4 +1,5 @@
 import type { z } from 'zod';
+import type { DealState } from '#shared/deal-states.ts';
 
 /** Who reads it: the name to greet and the zone that every moment is written in. */
 export type MailReader = { displayName: string; timeZone: string };
@@ -26,6 +27,8 @@ export type MailDefinition<Input> = {
   trigger: string;
   says: string;
   input: z.ZodType<Input>;
+  /** Where it asks for something by a day: the states in which that still holds. Sent late, it is dropped instead. */
+  appliesWhile?: readonly DealState[];
   write: (input: Input, reader: MailReader) => MailContent;
   attach?: (input: Input) => SheetAttachment;
 };

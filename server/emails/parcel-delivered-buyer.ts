@@ -14,6 +14,7 @@ export const parcelDeliveredBuyer = defineMail({
   trigger: 'the carrier delivered against signature, or the buyer confirmed the delivery',
   says: 'inspect by when, what to record, how to accept or contest',
   input,
+  appliesWhile: ['delivered'],
   write: ({ dealCode, lotTitle, deliveredAt, signedBy, inspectBy }, { timeZone }) => ({
     subject: `Inspect by ${momentText(inspectBy, timeZone)}: ${lotTitle}`,
     heading: 'Your parcel has been delivered',

@@ -9,6 +9,7 @@ export const parcelDeliveredSeller = defineMail({
   trigger: 'the carrier delivered against signature, or the buyer confirmed the delivery',
   says: 'delivered when, until when the buyer inspects',
   input,
+  appliesWhile: ['delivered'],
   write: ({ dealCode, lotTitle, deliveredAt, inspectBy }, { timeZone }) => ({
     subject: `Delivered: ${lotTitle}`,
     heading: 'Your parcel has been delivered',

@@ -15,6 +15,7 @@ export const parcelShipped = defineMail({
   trigger: 'the seller entered the parcel',
   says: 'carrier, tracking number, insured value, from when it may be reported as not arrived',
   input,
+  appliesWhile: ['shipped'],
   write: ({ dealCode, lotTitle, carrier, trackingNumber, insured, arriveBy }, { timeZone }) => ({
     subject: `On its way: ${lotTitle}`,
     heading: 'The seller has shipped',

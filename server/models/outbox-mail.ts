@@ -12,10 +12,11 @@ export class OutboxMail extends Model<InferAttributes<OutboxMail>, InferCreation
   declare id: string;
   declare mail: string;
   declare memberId: CreationOptional<string | null>;
+  declare dealId: CreationOptional<string | null>;
   declare recipient: string;
   declare uniqueKey: string;
   declare input: JsonValue;
-  declare state: 'due' | 'claimed' | 'sent' | 'dead';
+  declare state: 'due' | 'claimed' | 'sent' | 'dead' | 'superseded';
   declare leaseToken: CreationOptional<number>;
   declare leaseUntil: CreationOptional<Date | null>;
   declare tries: CreationOptional<number>;
@@ -31,6 +32,7 @@ OutboxMail.init(
     id: { type: DataTypes.CHAR(36), primaryKey: true, allowNull: false },
     mail: { type: DataTypes.STRING(40), allowNull: false },
     memberId: { type: DataTypes.CHAR(36) },
+    dealId: { type: DataTypes.CHAR(36) },
     recipient: { type: DataTypes.STRING(254), allowNull: false },
     uniqueKey: { type: DataTypes.STRING(160), allowNull: false },
     input: { type: DataTypes.JSON, allowNull: false },

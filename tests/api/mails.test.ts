@@ -224,6 +224,50 @@ describe('the mails of a settled deal', () => {
     expect(forSeller?.subject).toContain('Paid out: US$ 1,849.00');
     const seen = (await mailbox(deal.buyer)).map(({ text }) => text).join('\n');
     expect(seen).not.toMatch(/commission/i);
-    expect(await OutboxMail.count({ where: { state: 'sent' } })).toBe(await OutboxMail.count());
+    // The dates to ship, to receive and to inspect by are over before the first mail went out.
+    const dropped = await OutboxMail.findAll({ where: { state: 'superseded' } });
+    expect(dropped.map(({ mail }) => mail).sort()).toEqual([
+      'deal-funded-seller',
+      'parcel-delivered-buyer',
+      'parcel-delivered-seller',
+      'parcel-shipped',
+    ]);
+    expect(await OutboxMail.count({ where: { state: 'sent' } })).toBe((await OutboxMail.count()) - 4);
+  });
+});
+
+describe('the mails of a running deal', () => {
+  const mailsTo = ({ id }: BuiltMember) =>
+    OutboxMail.findAll({ where: { memberId: id }, order: [['createdAt', 'ASC']] });
+  const statesOf = async (reader: BuiltMember) =>
+    Object.fromEntries((await mailsTo(reader)).map(({ mail, state }) => [mail, state]));
+
+  it('wait for an older one to the same reader, not for one to the other side', async () => {
+    const deal = await buildDeal({ state: 'shipped' });
+    const [receipt] = await mailsTo(deal.buyer);
+    await receipt!.update({ nextAt: new Date(Date.now() + 60_000) });
+    expect(await send()).toEqual({});
+    expect(await statesOf(deal.buyer)).toEqual({ 'deal-funded-buyer': 'due', 'parcel-shipped': 'due' });
+    expect(await statesOf(deal.seller)).toEqual({ 'deal-funded-seller': 'superseded' });
+    laterBy(61);
+    expect(await send()).toEqual({ sent: 2 });
+    const subjects = (await mailbox(deal.buyer)).map(({ subject }) => subject);
+    expect(subjects).toHaveLength(2);
+    // The mailbox shows the newest first.
+    expect(subjects[0]).toMatch(/^On its way/);
+  });
+
+  it('do not wait for one that was given up', async () => {
+    const deal = await buildDeal({ state: 'shipped' });
+    const [receipt] = await mailsTo(deal.buyer);
+    await receipt!.update({ state: 'dead' });
+    expect(await send()).toEqual({ sent: 1 });
+    expect(await statesOf(deal.buyer)).toEqual({ 'deal-funded-buyer': 'dead', 'parcel-shipped': 'sent' });
+  });
+
+  it('are sent with their days while these are to come', async () => {
+    const deal = await buildDeal({ state: 'funded' });
+    expect(await send()).toEqual({ sent: 2 });
+    expect(await statesOf(deal.seller)).toEqual({ 'deal-funded-seller': 'sent' });
   });
 });

@@ -37,6 +37,7 @@ export async function mailDealFunded(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'deal-funded-seller',
       memberId: deal.sellerId,
+      dealId: deal.id,
       uniqueKey: `deal-funded:${deal.id}:seller`,
       input: {
         ...subject,
@@ -54,6 +55,7 @@ export async function mailDealFunded(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'deal-funded-buyer',
       memberId: deal.buyerId,
+      dealId: deal.id,
       uniqueKey: `deal-funded:${deal.id}:buyer`,
       input: { ...subject, price, shipping, total, shipBy },
     },
@@ -67,6 +69,7 @@ export async function mailParcelShipped(deal: Deal, parcel: Parcel, unit: Unit):
     {
       mail: 'parcel-shipped',
       memberId: deal.buyerId,
+      dealId: deal.id,
       uniqueKey: `parcel-shipped:${deal.id}:buyer`,
       input: {
         ...(await subjectOf(deal, unit)),
@@ -92,13 +95,20 @@ export async function mailParcelDelivered(deal: Deal, signedBy: string | null, u
     {
       mail: 'parcel-delivered-buyer',
       memberId: deal.buyerId,
+      dealId: deal.id,
       uniqueKey: `${key}:buyer`,
       input: { ...input, signedBy },
     },
     unit,
   );
   await enqueueMail(
-    { mail: 'parcel-delivered-seller', memberId: deal.sellerId, uniqueKey: `${key}:seller`, input },
+    {
+      mail: 'parcel-delivered-seller',
+      memberId: deal.sellerId,
+      dealId: deal.id,
+      uniqueKey: `${key}:seller`,
+      input,
+    },
     unit,
   );
 }
@@ -109,6 +119,7 @@ export async function mailDealAccepted(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'deal-accepted-seller',
       memberId: deal.sellerId,
+      dealId: deal.id,
       uniqueKey: `deal-accepted:${deal.id}:seller`,
       input: {
         ...subject,
@@ -124,6 +135,7 @@ export async function mailDealAccepted(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'deal-accepted-buyer',
       memberId: deal.buyerId,
+      dealId: deal.id,
       uniqueKey: `deal-accepted:${deal.id}:buyer`,
       input: { ...subject, total: minorToAmount(deal.totalMinor) },
     },
@@ -139,6 +151,7 @@ export async function mailPayoutSent(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'payout-sent-seller',
       memberId: deal.sellerId,
+      dealId: deal.id,
       uniqueKey: `payout-sent:${deal.id}:seller`,
       input: { ...subject, net: minorToAmount(netMinorOf(deal)), paidAt },
     },
@@ -148,6 +161,7 @@ export async function mailPayoutSent(deal: Deal, unit: Unit): Promise<void> {
     {
       mail: 'payout-sent-buyer',
       memberId: deal.buyerId,
+      dealId: deal.id,
       uniqueKey: `payout-sent:${deal.id}:buyer`,
       input: { ...subject, total: minorToAmount(deal.totalMinor), paidAt },
     },
@@ -163,7 +177,10 @@ export async function mailPayoutFailed(
 ): Promise<void> {
   const input = { ...(await subjectOf(deal, unit)), net: minorToAmount(netMinorOf(deal)), failureCode };
   const uniqueKey = `payout-failed:${deal.id}:${occasion}`;
-  await enqueueMail({ mail: 'payout-failed', memberId: deal.sellerId, uniqueKey, input }, unit);
+  await enqueueMail(
+    { mail: 'payout-failed', memberId: deal.sellerId, dealId: deal.id, uniqueKey, input },
+    unit,
+  );
 }
 
 export async function mailDealCancelled(deal: Deal, reason: string, unit: Unit): Promise<void> {
@@ -174,6 +191,7 @@ export async function mailDealCancelled(deal: Deal, reason: string, unit: Unit):
       {
         mail: 'deal-cancelled',
         memberId: memberOf(deal, side),
+        dealId: deal.id,
         uniqueKey: `deal-cancelled:${deal.id}:${side}`,
         input: { ...subject, side, total, reason },
       },
@@ -186,7 +204,10 @@ export async function mailDealCancelled(deal: Deal, reason: string, unit: Unit):
 export async function mailDealRefunded(deal: Deal, unit: Unit): Promise<void> {
   const input = { ...(await subjectOf(deal, unit)), total: minorToAmount(deal.totalMinor) };
   const uniqueKey = `deal-refunded:${deal.id}:buyer`;
-  await enqueueMail({ mail: 'deal-refunded', memberId: deal.buyerId, uniqueKey, input }, unit);
+  await enqueueMail(
+    { mail: 'deal-refunded', memberId: deal.buyerId, dealId: deal.id, uniqueKey, input },
+    unit,
+  );
 }
 
 export async function mailDealLapsed(deal: Deal, unit: Unit): Promise<void> {
@@ -194,7 +215,13 @@ export async function mailDealLapsed(deal: Deal, unit: Unit): Promise<void> {
   for (const side of SIDES) {
     const uniqueKey = `deal-lapsed:${deal.id}:${side}`;
     await enqueueMail(
-      { mail: 'deal-lapsed', memberId: memberOf(deal, side), uniqueKey, input: { ...subject, side } },
+      {
+        mail: 'deal-lapsed',
+        memberId: memberOf(deal, side),
+        dealId: deal.id,
+        uniqueKey,
+        input: { ...subject, side },
+      },
       unit,
     );
   }
@@ -204,7 +231,10 @@ export async function mailDealLapsed(deal: Deal, unit: Unit): Promise<void> {
 export async function mailLatePayment(deal: Deal, unit: Unit): Promise<void> {
   const input = { ...(await subjectOf(deal, unit)), total: minorToAmount(deal.totalMinor) };
   const uniqueKey = `late-payment:${deal.id}:buyer`;
-  await enqueueMail({ mail: 'late-payment-refunded', memberId: deal.buyerId, uniqueKey, input }, unit);
+  await enqueueMail(
+    { mail: 'late-payment-refunded', memberId: deal.buyerId, dealId: deal.id, uniqueKey, input },
+    unit,
+  );
 }
 
 /** A second payment of a deal that was paid before; sent back while the deal goes on. */
@@ -215,7 +245,10 @@ export async function mailSecondPayment(
 ): Promise<void> {
   const input = { ...(await subjectOf(deal, unit)), total: minorToAmount(amountMinor) };
   const uniqueKey = `second-payment:${chargeId}`;
-  await enqueueMail({ mail: 'second-payment-refunded', memberId: deal.buyerId, uniqueKey, input }, unit);
+  await enqueueMail(
+    { mail: 'second-payment-refunded', memberId: deal.buyerId, dealId: deal.id, uniqueKey, input },
+    unit,
+  );
 }
 
 export async function mailDealContested(
@@ -230,6 +263,7 @@ export async function mailDealContested(
       {
         mail: 'deal-contested',
         memberId: memberOf(deal, side),
+        dealId: deal.id,
         uniqueKey: `deal-contested:${deal.id}:${side}`,
         input: { ...subject, side, reason: CONTEST_REASON_LABELS[reason], note, decideBy },
       },
@@ -247,6 +281,7 @@ export async function mailDealTakenUp(deal: Deal, reason: string, unit: Unit): P
       {
         mail: 'deal-taken-up',
         memberId: memberOf(deal, side),
+        dealId: deal.id,
         uniqueKey: `deal-taken-up:${deal.id}:${side}`,
         input: { ...subject, side, reason, decideBy },
       },
@@ -266,6 +301,7 @@ export async function mailDealRuled(
       {
         mail: 'deal-ruled',
         memberId: memberOf(deal, side),
+        dealId: deal.id,
         uniqueKey: `deal-ruled:${deal.id}:${side}`,
         input: { ...subject, ruling, reason },
       },

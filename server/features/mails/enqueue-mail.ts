@@ -8,6 +8,8 @@ import { OutboxMail } from '#server/models/outbox-mail.ts';
 export type MailOrder<Name extends MailName> = {
   mail: Name;
   memberId: string;
+  /** The deal that it tells of: its mails reach a reader in their order. */
+  dealId?: string;
   /** Names the mail for ever: the same key is never mailed twice. Such as `deal-funded:<deal id>:seller`. */
   uniqueKey: string;
   input: MailInput<Name>;
@@ -32,6 +34,7 @@ export async function enqueueMail<Name extends MailName>(order: MailOrder<Name>,
       id: newId(),
       mail: order.mail,
       memberId: member.id,
+      dealId: order.dealId ?? null,
       recipient: member.email,
       uniqueKey: order.uniqueKey,
       input,
