@@ -1,8 +1,10 @@
 import { z } from 'zod';
 import { isCountryCode } from '../countries.ts';
+import { wordsForIssue } from './issue-words.ts';
 
 // A strict content policy forbids `eval`, which zod would otherwise probe for.
-z.config({ jitless: true });
+// People read these words beside a field, so none of the library's own reach them.
+z.config({ jitless: true, customError: wordsForIssue });
 
 /** A plain decimal number as a string, dot as separator, no exponent: how every figure travels. */
 export const decimalString = z
