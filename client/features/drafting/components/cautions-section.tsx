@@ -1,3 +1,4 @@
+import { CAUTIONS, SELLER_CONFIRMATIONS } from '#shared/rules.ts';
 import { FieldError } from '../../../components/ui/field.tsx';
 import { Checkbox } from '../../../components/ui/inputs.tsx';
 import { cautionsOfLot } from '../cautions-of-lot.ts';
@@ -16,16 +17,10 @@ export function CautionsSection() {
             <li key={caution}>{caution}</li>
           ))}
         </ul>
-        <p className="mt-3 max-w-prose font-medium">Check your local rules; this is not legal advice.</p>
+        <p className="mt-3 max-w-prose font-medium">{CAUTIONS.localRules}</p>
       </div>
-      <Confirmation
-        name="confirmsCautions"
-        label="I have read the cautions, and the lot is clean, dry and free of what may not be posted."
-      />
-      <Confirmation
-        name="confirmsTitle"
-        label="The metal is mine to sell, and nobody else has a claim on it."
-      />
+      <Confirmation name="confirmsCautions" label={SELLER_CONFIRMATIONS.cautions} />
+      <Confirmation name="confirmsTitle" label={SELLER_CONFIRMATIONS.title} />
     </FormSection>
   );
 }

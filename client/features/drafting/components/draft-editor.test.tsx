@@ -253,6 +253,16 @@ describe('the sheet beside the form', () => {
     expect((await within(beside).findAllByText('1,454.77')).length).toBeGreaterThan(0);
   });
 
+  it('is repeated in a line over the buttons, which leads to it', async () => {
+    open({ ...complete, gross: { value: '12.34', unit: 'g' }, price: '700' });
+    const line = await screen.findByRole('link', {
+      name: /^Estimate: US\$.692\.00 to you · 96\.24.% of melt$/,
+    });
+    window.HTMLElement.prototype.scrollIntoView = vi.fn();
+    await userEvent.click(line);
+    expect(screen.getByRole('heading', { name: 'What it comes to' })).toHaveFocus();
+  });
+
   it('says that figures rest on an old quote', async () => {
     apiServer.use(http.get('/api/v1/quotes', () => HttpResponse.json(quotes(false))));
     open(complete);

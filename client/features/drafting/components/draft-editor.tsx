@@ -12,6 +12,7 @@ import { DraftFormContext } from '../../../components/lot-form/draft-form-contex
 import { useDraftProblems } from '../hooks/use-draft-problems.ts';
 import { useDraftSaving, type DraftSaving } from '../hooks/use-draft-saving.ts';
 import { useLeaveGuard } from '../hooks/use-leave-guard.ts';
+import { useLiveSheet } from '../hooks/use-live-sheet.ts';
 import { PAYOUTS_FIRST, useSubmission } from '../hooks/use-submission.ts';
 import { startingDraft } from '../starting-draft.ts';
 import { ConflictPanel } from './conflict-panel.tsx';
@@ -20,6 +21,7 @@ import { DraftFormFields } from './draft-form-fields.tsx';
 import { LiveSheet } from './live-sheet.tsx';
 import { PayoutsFirst } from './payouts-first.tsx';
 import { SaveLine } from './save-line.tsx';
+import { SheetLine } from './sheet-line.tsx';
 import { SubmitQuestion } from './submit-question.tsx';
 
 /** On a narrow screen the bar is one row of buttons, so that it hides no field. */
@@ -45,6 +47,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
   const { draft, change, state, save } = saving;
   const problems = useDraftProblems(draft);
   const { errorAt, touch } = problems;
+  const live = useLiveSheet(draft);
   const { isDirty } = saving;
   const isUnsaved = useCallback(() => !isGone.current && isDirty(), [isDirty]);
   const submission = useSubmission(lot.code, saving, problems, { canSell, onDone: onSubmitted });
@@ -65,7 +68,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
         <form
           noValidate
           aria-label="Lot"
-          className="min-w-0 [&_:is(input,select,textarea,button,fieldset)]:scroll-mb-28"
+          className="min-w-0 [&_:is(input,select,textarea,button,fieldset)]:scroll-mb-32"
           onBlur={(event: FocusEvent) => touch(event.target.id)}
           onSubmit={(event) => {
             event.preventDefault();
@@ -76,6 +79,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
             <DraftFormFields evidence={evidence} />
           </DraftFormContext>
           <div className="no-print sticky bottom-0 z-10 -mx-1 border-t border-line bg-paper px-1 py-1.5 sm:py-3">
+            <SheetLine sheet={live.sheet} />
             {submission.isConfirming ? (
               <SubmitQuestion submission={submission} draft={draft} />
             ) : (
@@ -89,7 +93,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
           </div>
         </form>
         <div className="lg:sticky lg:top-4 lg:max-h-[calc(100dvh-2rem)] lg:overflow-y-auto lg:pt-6">
-          <LiveSheet draft={draft} />
+          <LiveSheet live={live} />
         </div>
       </div>
       {!wasSubmitted && (

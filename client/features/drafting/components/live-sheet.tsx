@@ -1,4 +1,3 @@
-import type { LotDraft } from '#shared/schemas/lots.ts';
 import type { QuotesAnswer } from '#shared/schemas/quotes.ts';
 import type { SettlementSheet } from '#shared/settlement/sheet-types.ts';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
@@ -8,16 +7,18 @@ import { Notice } from '../../../components/ui/notice.tsx';
 import { Time } from '../../../components/ui/time.tsx';
 import { formatMoney, formatPercent } from '../../../lib/format.ts';
 import { bandOf } from '../../../lib/shown-figures.ts';
-import { useLiveSheet, type NetLine } from '../hooks/use-live-sheet.ts';
+import type { LiveSheetFigures, NetLine } from '../hooks/use-live-sheet.ts';
+import { LIVE_SHEET_ID } from './sheet-line.tsx';
 
 const methodNames: Record<NetLine['method'], string> = { card: 'card', bank_debit: 'bank debit' };
 
 /** What the lot is worth and what it would pay out, from what is typed and the newest quotes. */
-export function LiveSheet({ draft }: { draft: LotDraft }) {
-  const { sheet, nets, quotes } = useLiveSheet(draft);
+export function LiveSheet({ live: { sheet, nets, quotes } }: { live: LiveSheetFigures }) {
   return (
-    <section aria-labelledby="live-sheet" className="flex flex-col gap-5">
-      <h2 id="live-sheet">What it comes to</h2>
+    <section aria-labelledby={LIVE_SHEET_ID} className="flex flex-col gap-5">
+      <h2 id={LIVE_SHEET_ID} tabIndex={-1} className="scroll-mt-4">
+        What it comes to
+      </h2>
       {quotes && <QuoteRemark quotes={quotes} sheet={sheet} />}
       {sheet ? <Rule sheet={sheet} /> : <Waiting quotes={quotes} />}
       {nets.length > 0 && <Nets nets={nets} />}

@@ -71,3 +71,5 @@ export function useLiveSheet(draft: LotDraft) {
   const nets = useMemo(() => netsOf(sheet, fees), [sheet, fees]);
   return { sheet, nets, quotes };
 }
+
+export type LiveSheetFigures = ReturnType<typeof useLiveSheet>;
