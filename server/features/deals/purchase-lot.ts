@@ -1,7 +1,7 @@
 import { UniqueConstraintError } from 'sequelize';
 import { MeasureError } from '#shared/domain-error.ts';
 import { fromAmount } from '#shared/money.ts';
-import { RULES_VERSION } from '#shared/rules-version.ts';
+import { RULES_VERSION } from '#shared/rules.ts';
 import type { PurchaseRequest } from '#shared/schemas/deals.ts';
 import { commissionFor } from '#shared/settlement/commission.ts';
 import {

@@ -5,7 +5,7 @@ import { checkLotDraft, type LotProblem, type ParsedLot } from '#shared/lot-subm
 import { lotDraft } from '#shared/schemas/lots.ts';
 import { AppError, ConflictError, invariant } from '#server/app-error.ts';
 import type { Unit } from '#server/database/transaction.ts';
-import { RULES_VERSION } from '#shared/rules-version.ts';
+import { RULES_VERSION } from '#shared/rules.ts';
 import { canSell } from '#server/features/members/member-queries.ts';
 import { Laboratory } from '#server/models/laboratory.ts';
 import type { Lot } from '#server/models/lot.ts';

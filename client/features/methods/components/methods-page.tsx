@@ -1,5 +1,5 @@
 import { Link } from 'react-router-dom';
-import { RULES_VERSION } from '#shared/rules-version.ts';
+import { RULES_VERSION } from '#shared/rules.ts';
 import { ENGINE_VERSION } from '#shared/settlement/refined-sheet.ts';
 import { Page } from '../../../components/ui/page.tsx';
 import { paths } from '../../../lib/paths.ts';

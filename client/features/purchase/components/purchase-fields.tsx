@@ -1,7 +1,8 @@
 import { useEffect, useRef, useState, type SubmitEvent } from 'react';
 import type { UseMutationResult } from '@tanstack/react-query';
 import type { DealAnswer, PurchaseRequest } from '#shared/schemas/deals.ts';
-import { FUND_MINUTES, INSPECT_DAYS } from '#shared/limits.ts';
+import { FUND_MINUTES } from '#shared/limits.ts';
+import { BUYER_CONFIRMATIONS } from '#shared/rules.ts';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { ErrorSummary } from '../../../components/ui/error-summary.tsx';
@@ -139,12 +140,8 @@ function Confirmations({ form, errors, onChange }: ConfirmationsProps) {
   return (
     <fieldset className="mt-8 flex min-w-0 flex-col gap-3">
       <legend className="mb-3 text-title font-semibold">What you confirm</legend>
-      {box('confirmsAge', 'I am 18 or older.')}
-      {box(
-        'confirmsRules',
-        'I buy at the stated assay, and I will weigh and check what arrives before I accept it.',
-        `A difference in mass or metal is reported before accepting; then the money stays in escrow and the assay desk looks at it. You have ${INSPECT_DAYS} days from the delivery to look; nothing is accepted by silence. Licences and tax are yours: check your local rules; this is not legal advice.`,
-      )}
+      {box('confirmsAge', BUYER_CONFIRMATIONS.age)}
+      {box('confirmsRules', BUYER_CONFIRMATIONS.rules, BUYER_CONFIRMATIONS.rulesHint)}
     </fieldset>
   );
 }
