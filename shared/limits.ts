@@ -5,6 +5,8 @@ export const RATE_LIMITS = {
   /** Failed tries from one address at any accounts: one password tried on many of them. */
   'sign-in-address': { windowSeconds: 900, requestsMax: 60 },
   'sign-up': { windowSeconds: 3600, requestsMax: 20 },
+  /** Asking who is here: each caller without a cookie is given a session, so this is held lower than reading. */
+  session: { windowSeconds: 60, requestsMax: 120 },
   valuation: { windowSeconds: 60, requestsMax: 60 },
   upload: { windowSeconds: 600, requestsMax: 120 },
   write: { windowSeconds: 60, requestsMax: 120 },
@@ -53,4 +55,6 @@ export const INSPECT_DAYS = 5;
 export const CONTESTED_DESK_DAYS = 7;
 
 export const SESSION_IDLE_HOURS = 12;
+/** A visitor who has not signed in has nothing to lose but the page's token. */
+export const ANONYMOUS_SESSION_IDLE_HOURS = 2;
 export const SESSION_ABSOLUTE_DAYS = 7;

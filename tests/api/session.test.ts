@@ -1,7 +1,9 @@
 import { QueryTypes } from 'sequelize';
 import supertest from 'supertest';
 import { describe, expect, it } from 'vitest';
+import { ANONYMOUS_SESSION_IDLE_HOURS, SESSION_IDLE_HOURS } from '#shared/limits.ts';
 import { sequelize } from '#server/database/connection.ts';
+import { SessionRow } from '#server/models/session-row.ts';
 import { buildMember } from '#tests/factories/build-member.ts';
 import { startTestApp } from '#tests/helpers/test-app.ts';
 
@@ -157,6 +159,43 @@ describe('sign-in', () => {
     await visitor.refreshToken();
     const profile = { displayName: 'Other', region: 'There', weightUnit: 'g', timeZone: 'UTC' };
     await visitor.put('/api/v1/me/profile', profile).expect(401);
+  });
+});
+
+describe('the session of somebody who has not signed in', () => {
+  const sidOf = (headers: Record<string, unknown>) => {
+    const [cookie = ''] = (headers['set-cookie'] as string[] | undefined) ?? [];
+    return decodeURIComponent(cookie).match(/^scruple=s:([^.]+)/)?.[1] ?? null;
+  };
+  const hoursLeft = async (sid: string | null) => {
+    const row = await SessionRow.findByPk(sid ?? '', { rejectOnEmpty: true });
+    return ((row.expires?.getTime() ?? 0) - Date.now()) / 3_600_000;
+  };
+
+  it('is made by no HEAD', async () => {
+    const before = await SessionRow.count();
+    const { headers } = await supertest(app.url).head('/api/v1/session').expect(200);
+    expect(headers['set-cookie']).toBeUndefined();
+    expect(await SessionRow.count()).toBe(before);
+  });
+
+  it('is one for all that a browser asks, and short; signing in gives the full time', async () => {
+    const member = await buildMember();
+    const agent = supertest.agent(app.url);
+    const first = await agent.get('/api/v1/session').expect(200);
+    const sid = sidOf(first.headers);
+    expect(await hoursLeft(sid)).toBeCloseTo(ANONYMOUS_SESSION_IDLE_HOURS, 1);
+    const count = await SessionRow.count();
+    const again = await agent.get('/api/v1/session').expect(200);
+    expect(again.body.csrfToken).toBe(first.body.csrfToken);
+    expect(await SessionRow.count()).toBe(count);
+    const signedIn = await agent
+      .post('/api/v1/session')
+      .set('X-CSRF-Token', first.body.csrfToken)
+      .send({ email: member.email, password: member.password })
+      .expect(200);
+    expect(await hoursLeft(sidOf(signedIn.headers))).toBeCloseTo(SESSION_IDLE_HOURS, 1);
+    expect(await SessionRow.findByPk(sid ?? '')).toBeNull();
   });
 });
 

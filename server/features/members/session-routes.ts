@@ -1,4 +1,5 @@
 import type { NextFunction, Request, Response } from 'express';
+import { ANONYMOUS_SESSION_IDLE_HOURS } from '#shared/limits.ts';
 import { profileRequest, sessionAnswer, signInRequest, signUpRequest } from '#shared/schemas/session.ts';
 import { AppError } from '#server/app-error.ts';
 import { withTransaction } from '#server/database/transaction.ts';
@@ -22,6 +23,11 @@ async function answerSession(
   res
     .status(status)
     .json({ csrfToken: csrfTokenOf(req), member: member === null ? null : presentMember(member) });
+}
+
+/** Anyone at all can have such a session made, so its row goes soon; signing in makes another, with its own time. */
+function keepShortly(req: Request): void {
+  req.session.cookie.maxAge = ANONYMOUS_SESSION_IDLE_HOURS * 3_600_000;
 }
 
 function checkCredentials(req: Request, res: Response): Promise<Actor | null> {
@@ -55,9 +61,14 @@ export const sessionRoutes: RouteDefinition[] = [
     path: '/api/v1/session',
     summary: 'Who is signed in, and the token that unsafe requests carry',
     access: 'public',
-    limit: 'read',
+    limit: 'session',
     answer: sessionAnswer,
-    handle: ({ req, res, viewer }) => answerSession(req, res, viewer?.id ?? null),
+    handle: async ({ req, res, viewer }) => {
+      // Nobody reads the token of an answer without a body; making one would leave a row for nothing.
+      if (req.method === 'HEAD') return void res.status(200).end();
+      if (viewer === null) keepShortly(req);
+      await answerSession(req, res, viewer?.id ?? null);
+    },
   }),
   defineRoute({
     method: 'post',
