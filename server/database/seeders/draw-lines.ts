@@ -16,11 +16,9 @@ export function smooth(points: readonly Point[]): string {
     const [before, from, to, after] = [at(index - 1), at(index), at(index + 1), at(index + 2)];
     const first = [from[0] + (to[0] - before[0]) / 6, from[1] + (to[1] - before[1]) / 6];
     const second = [to[0] - (after[0] - from[0]) / 6, to[1] - (after[1] - from[1]) / 6];
-    return `C${[...first, ...second, ...to].map((value) => value.toFixed(1)).join(' ')}`;
+    return `C${[...first, ...second, ...to].join(' ')}`;
   });
-  return `M${at(0)
-    .map((value) => value.toFixed(1))
-    .join(' ')}${curves.join('')}Z`;
+  return `M${at(0).join(' ')}${curves.join('')}Z`;
 }
 
 /** An outline as round as cast metal is: never quite. */

@@ -78,7 +78,7 @@ function buttonUnder(seed: number): string {
     const angle = (index / 72) * 2 * Math.PI;
     const [cos, sin] = [Math.cos(angle), Math.sin(angle)];
     const inner = 0.93 + wobble(seed, index, 0.03);
-    return `M${(600 + 440 * cos).toFixed(1)} ${(405 + 362 * sin).toFixed(1)}L${(600 + 440 * inner * cos).toFixed(1)} ${(405 + 362 * inner * sin).toFixed(1)}`;
+    return `M${600 + 440 * cos} ${405 + 362 * sin}L${600 + 440 * inner * cos} ${405 + 362 * inner * sin}`;
   });
   return (
     line(outline, { fill: PAPER, width: 8 }) +
@@ -161,7 +161,7 @@ function barUnder(seed: number): string {
   const grit = Array.from({ length: 70 }, (_, index) => {
     const x = 600 + wobble(seed, index + 20, 470);
     const y = 405 + wobble(seed, index + 120, 250);
-    return `M${x.toFixed(1)} ${y.toFixed(1)}l${(9 + wobble(seed, index, 6)).toFixed(1)} ${(5 + wobble(seed, index + 7, 6)).toFixed(1)}`;
+    return `M${x} ${y}l${9 + wobble(seed, index, 6)} ${5 + wobble(seed, index + 7, 6)}`;
   });
   return (
     line(outline, { fill: PAPER, width: 8 }) +
