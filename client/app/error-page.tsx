@@ -57,7 +57,9 @@ function NotYours({ error }: { error: unknown }) {
   return (
     <Page title="This page is not open to your account">
       <p className="max-w-prose text-ink-2">
-        {error instanceof ApiProblem ? error.detail : 'It is kept for others.'}
+        {error instanceof ApiProblem && error.code !== 'forbidden'
+          ? error.detail
+          : 'It is kept for accounts with another role.'}
       </p>
       <div className="mt-6 flex flex-wrap gap-3">
         {canUseDesk && <LinkButton to={paths.desk()}>Go to the desk</LinkButton>}
