@@ -1,3 +1,4 @@
+import { randomInt } from 'node:crypto';
 import net from 'node:net';
 import { readJson, writeJson } from './files.mjs';
 import { inData } from './paths.mjs';
@@ -23,20 +24,24 @@ export function isPortFree(port, host = '127.0.0.1') {
   });
 }
 
-/** A free loopback port chosen by the system. */
-export function freePort() {
-  return new Promise((resolve, reject) => {
-    const probe = net.createServer().once('error', reject);
-    probe.listen(0, '127.0.0.1', () => {
-      const { port } = probe.address();
-      probe.close(() => resolve(port));
-    });
-  });
+/** Below the range from which systems take the near end of outgoing connections: nobody else is given one of these. */
+const throwAway = { first: 20_000, last: 32_000 };
+
+/**
+ * A free loopback port by chance. Not the system's own choice: some systems give the same port again as soon as it was let
+ * go, and another process may get it as the near end of a connection before it is listened on.
+ */
+export async function freePort() {
+  for (let tries = 0; tries < 200; tries += 1) {
+    const port = randomInt(throwAway.first, throwAway.last);
+    if (await isPortFree(port)) return port;
+  }
+  throw new Halt('No free loopback port was found.');
 }
 
 /**
  * One port for each name: the one of last time, else the usual one, else the next free one, which is said aloud.
- * `PORT` names the product's own. With `SCRUPLE_PORTS=free` the system chooses all of them (throw-away starts).
+ * `PORT` names the product's own. With `SCRUPLE_PORTS=free` all of them are chosen by chance (throw-away starts).
  */
 export async function choosePorts(names) {
   const remembered = readRemembered();
@@ -77,7 +82,7 @@ async function freePortOutside(taken) {
     const port = await freePort();
     if (!taken.includes(port)) return port;
   }
-  throw new Halt('The system gives no free loopback port.');
+  throw new Halt('No free loopback port was found.');
 }
 
 function readRemembered() {

@@ -95,7 +95,7 @@ export async function findLotDetail(code: string, viewer: Actor | null): Promise
     countCompletedDeals(lot.sellerId),
     Member.findByPk(lot.sellerId, { attributes: ['suspendedAt'] }),
   ]);
-  const isSellerSuspended = seller?.suspendedAt != null;
+  const isSellerSuspended = seller !== null && seller.suspendedAt !== null;
   return { lot, assays, photos, certificate, events, completedDeals, isSellerSuspended, deal };
 }
 

@@ -37,5 +37,5 @@ export async function isSellerSuspended(lot: Pick<Lot, 'sellerId'>, { tx }: Unit
     lock: tx.LOCK.SHARE,
     transaction: tx,
   });
-  return seller?.suspendedAt != null;
+  return seller !== null && seller.suspendedAt !== null;
 }
