@@ -204,6 +204,7 @@ const deskPlaces: Place[] = [
     address: '/desk/members?query=ilse',
   },
   { name: 'audit', route: '/desk/audit', reader: 'admin', address: '/desk/audit' },
+  { name: 'given-up mails', route: '/admin/mails', reader: 'admin', address: '/admin/mails' },
 ];
 
 /** Every page in the states that a person can meet. */
