@@ -4,7 +4,8 @@ import type { Actor } from '#server/routing/define-route.ts';
 import type { Deal } from '#server/models/deal.ts';
 import type { Lot } from '#server/models/lot.ts';
 
-type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'>;
+type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'> &
+  Partial<Pick<Lot, 'floorPercent' | 'pricingBasis'>>;
 type Viewer = Pick<Actor, 'id' | 'role' | 'suspendedAt'> | null;
 
 export function isSeller(viewer: Viewer, lot: Pick<Lot, 'sellerId'>): boolean {
@@ -38,12 +39,13 @@ export function lotRights(viewer: Viewer, lot: LotRow, isSellerSuspended: boolea
     edit: mayChange && lot.state === 'draft',
     submit: mayChange && lot.state === 'draft',
     redraft: mayChange && lot.state === 'returned',
-    changePrice: mayChange && lot.state === 'open',
+    changePrice:
+      mayChange && (lot.state === 'open' || (lot.state === 'paused' && typeof lot.floorPercent === 'string')),
     withdraw: mayChange && canLotBecome(lot.state, 'withdrawn'),
     pause: mayChange && lot.state === 'open',
     reopen: mayChange && lot.state === 'paused',
     copy: mayChange && lot.state !== 'draft',
-    buy: mayBuy && !isOwn && lot.state === 'open' && !isSellerSuspended,
+    buy: mayBuy && !isOwn && lot.state === 'open' && lot.pricingBasis !== 'linked' && !isSellerSuspended,
     pull: viewer !== null && isDeskStaff(viewer.role) && !isOwn && PULLABLE.includes(lot.state),
   };
 }

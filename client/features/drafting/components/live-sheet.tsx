@@ -19,7 +19,7 @@ export function LiveSheet({ draft }: { draft: LotDraft }) {
     <section aria-labelledby="live-sheet" className="flex flex-col gap-5">
       <h2 id="live-sheet">What it comes to</h2>
       {quotes && <QuoteRemark quotes={quotes} sheet={sheet} />}
-      {sheet ? <Rule sheet={sheet} /> : <Waiting quotes={quotes} />}
+      {sheet ? <Rule sheet={sheet} isLinked={draft.pricing === 'linked'} /> : <Waiting quotes={quotes} />}
       {nets.length > 0 && <Nets nets={nets} />}
       {sheet && <SettlementSheetView sheet={sheet} title="Your sheet" />}
     </section>
@@ -71,13 +71,15 @@ function bandOf({ melt }: SettlementSheet) {
   return { low: percent(melt.low), high: percent(melt.high) };
 }
 
-function Rule({ sheet }: { sheet: SettlementSheet }) {
+function Rule({ sheet, isLinked }: { sheet: SettlementSheet; isLinked: boolean }) {
   const at = sheet.quotes.map((quote) => quote.at).sort()[0] ?? null;
   return (
     <div className="sheet p-4">
       <MeltRule
         band={bandOf(sheet)}
-        marks={sheet.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
+        marks={
+          sheet.percentOfMelt ? [{ kind: isLinked ? 'linked' : 'price', percent: sheet.percentOfMelt }] : []
+        }
         quote={{ at }}
       />
     </div>

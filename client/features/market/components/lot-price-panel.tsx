@@ -18,7 +18,8 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
   const total = totalOf(lot);
   return (
     <section aria-label="Price and purchase" className="sheet p-5">
-      {price && (
+      {lot.linkedPercent && <LinkedPrice lot={lot} total={total} />}
+      {price && !lot.linkedPercent && (
         <>
           <p className="text-note text-ink-2">Outright price</p>
           <p className="text-head leading-tight">
@@ -43,7 +44,11 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
       <div className="mt-5">
         <MeltRule
           band={sheet && bandOf(sheet.melt)}
-          marks={sheet?.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
+          marks={
+            sheet?.percentOfMelt
+              ? [{ kind: lot.linkedPercent ? 'linked' : 'price', percent: sheet.percentOfMelt }]
+              : []
+          }
           quote={sheet && { at: sheetQuotedAt(sheet) }}
         />
       </div>
@@ -51,6 +56,31 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
         <NextStep lot={lot} total={total} isSignedIn={isSignedIn} />
       </div>
     </section>
+  );
+}
+
+/** The share of melt first, because it is what the seller asks; the sum follows the quote, or waits. */
+function LinkedPrice({ lot, total }: { lot: LotAnswer; total: string | null }) {
+  const { price, priceWait, linkedPercent, shipping } = lot;
+  return (
+    <>
+      <p className="text-note text-ink-2">Price linked to the melt value</p>
+      <p className="text-head leading-tight">linked {formatPercent(linkedPercent ?? '0')}</p>
+      <p className="text-note text-ink-2">
+        {price && (
+          <>
+            {priceWait ? 'At the last quotes' : 'Now'} <Money value={price.amount} />
+            {shipping && total && (
+              <>
+                ; with the insured parcel of <Money value={shipping.amount} />, <Money value={total} /> in all
+              </>
+            )}
+            .{' '}
+          </>
+        )}
+        It follows the quote.
+      </p>
+    </>
   );
 }
 
