@@ -6,6 +6,7 @@ import { lapseUnfundedDealsJob } from './lapse-unfunded-deals.ts';
 import { performProviderTasksJob } from './perform-provider-tasks.ts';
 import { reconcilePaymentsJob } from './reconcile-payments.ts';
 import { runChecksJob } from './run-checks.ts';
+import { endPriceFixesJob } from './end-price-fixes.ts';
 import { closeLotsJob } from './close-lots.ts';
 import { rekeyLotsJob } from './rekey-lots.ts';
 import { removeStrayFilesJob } from './remove-stray-files.ts';
@@ -22,6 +23,7 @@ export const allJobs: readonly Job[] = [
   reconcilePaymentsJob,
   runChecksJob,
   closeLotsJob,
+  endPriceFixesJob,
   rekeyLotsJob,
   removeStrayFilesJob,
 ];

@@ -12,6 +12,7 @@ import { webhookRoutes } from '#server/features/provider-events/webhook-routes.t
 import { feeRoutes } from '#server/features/fees/fee-routes.ts';
 import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
 import { lotRoutes } from '#server/features/lots/lot-routes.ts';
+import { priceFixRoutes } from '#server/features/price-fixes/price-fix-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
 import { registerRoutes } from '#server/features/register/register-routes.ts';
 import { valuationRoutes } from '#server/features/valuations/valuation-routes.ts';
@@ -33,6 +34,7 @@ const productRoutes: readonly RouteDefinition[] = [
   ...registerRoutes,
   ...feeRoutes,
   ...lotRoutes,
+  ...priceFixRoutes,
   ...photoRoutes,
   ...documentRoutes,
   ...valuationRoutes,

@@ -152,6 +152,13 @@ export type PriceWait = z.infer<typeof priceWait>;
 
 export const PRICING_BASES = ['outright', 'linked', 'ascending', 'tender'] as const;
 
+/** The fix that holds a lot now: until when for everyone, the sum only for who holds it. */
+export const lotPriceFix = z.object({
+  isMine: z.boolean(),
+  until: instant,
+  price: moneySchema.nullable(),
+});
+
 export const lotCan = z.object({
   edit: z.boolean(),
   submit: z.boolean(),
@@ -162,6 +169,8 @@ export const lotCan = z.object({
   reopen: z.boolean(),
   copy: z.boolean(),
   buy: z.boolean(),
+  fixPrice: z.boolean(),
+  giveUpFix: z.boolean(),
   pull: z.boolean(),
 });
 
@@ -206,6 +215,7 @@ export const lotAnswer = z.object({
   floorPercent: decimalString.nullable(),
   /** Why a linked price cannot be fixed now; null where it can, and for lots that are not linked. */
   priceWait: priceWait.nullable(),
+  priceFix: lotPriceFix.nullable(),
   shipping: moneySchema.nullable(),
   destinations: z.array(z.string()),
   closesAt: instant.nullable(),
@@ -284,6 +294,25 @@ export const registerAnswer = z.object({
   quotedAt: instant.nullable(),
 });
 export type RegisterAnswer = z.infer<typeof registerAnswer>;
+
+/** A linked price made a sum, at the quotes that it names. */
+export const priceFixAnswer = z.object({
+  lotCode,
+  percent: decimalString,
+  price: moneySchema,
+  total: moneySchema,
+  until: instant,
+  quotes: z.array(
+    z.object({
+      id: z.string().nullable(),
+      metal: metalSchema,
+      usdPerTroyOunce: decimalString,
+      at: instant.nullable(),
+      source: z.string(),
+    }),
+  ),
+});
+export type PriceFixAnswer = z.infer<typeof priceFixAnswer>;
 
 export const myLotsAnswer = z.object({
   lots: z.array(

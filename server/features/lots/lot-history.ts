@@ -15,6 +15,9 @@ const PUBLIC_ACTS: ReadonlySet<string> = new Set([
   'paused',
   'reopened',
   'reserved',
+  'price-fixed',
+  'fix-ran-out',
+  'fix-given-up',
 ]);
 
 /** A reason is for the seller and the desk; that a price has changed is for all. */

@@ -8,7 +8,12 @@ import { isDeskStaff } from '#shared/roles.ts';
 import { lotDraft, type ContentAnswer, type LotAnswer, type PriceWait } from '#shared/schemas/lots.ts';
 import { explainCommission } from '#shared/settlement/commission.ts';
 import { refinedSheet } from '#shared/settlement/refined-sheet.ts';
-import type { CommissionTerms, RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
+import type {
+  CommissionTerms,
+  QuoteRef,
+  RefinedSheetInput,
+  SettlementSheet,
+} from '#shared/settlement/sheet-types.ts';
 import { photoAnswerOf } from '#server/features/photos/photo-answer.ts';
 import { priceWaitOf } from '#server/features/quotes/price-wait.ts';
 import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
@@ -55,8 +60,12 @@ function termsOf(fee: CurrentFee): CommissionTerms {
 
 type Sheets = Pick<LotAnswer, 'sheet' | 'sellerSheet'>;
 
-function sheetsOf(detail: LotDetail, board: QuoteBoard, fees: readonly CurrentFee[], isOwn: boolean): Sheets {
-  const quotes = quoteRefs(board);
+function sheetsOf(
+  detail: LotDetail,
+  quotes: readonly QuoteRef[],
+  fees: readonly CurrentFee[],
+  isOwn: boolean,
+): Sheets {
   const fee = fees.find(({ method }) => method === SHOWN_METHOD);
   const commission = isOwn && fee !== undefined ? termsOf(fee) : null;
   if (detail.lot.state === 'draft') {
@@ -161,16 +170,31 @@ function figuresOf({ lot, assays }: LotDetail): Figures {
   };
 }
 
+type Viewing = { viewer: Actor | null; board: QuoteBoard; fees: readonly CurrentFee[]; now: Date };
+
+/** Everyone may know until when a lot is held; the sum is between its holder and the house. */
+function presentFix({ fix }: LotDetail, { viewer, now }: Viewing): LotAnswer['priceFix'] {
+  if (fix === null || now >= fix.fixedUntil) return null;
+  const isMine = viewer !== null && viewer.id === fix.memberId;
+  return {
+    isMine,
+    until: fix.fixedUntil.toISOString(),
+    price: isMine ? moneyAnswer(fix.priceMinor) : null,
+  };
+}
+
 /** A lot as a viewer may see it: never an address; the draft, nets and reasons only for the seller (and the desk). */
-export function presentLot(
-  detail: LotDetail,
-  { viewer, board, fees }: { viewer: Actor | null; board: QuoteBoard; fees: readonly CurrentFee[] },
-): LotAnswer {
+export function presentLot(detail: LotDetail, viewing: Viewing): LotAnswer {
+  const { viewer, board, fees } = viewing;
   const { lot, deal } = detail;
+  const wait = priceWaitFor(detail, board);
+  const priceFix = presentFix(detail, viewing);
   const isOwn = isSeller(viewer, lot);
   const isInside = isOwn || (viewer !== null && isDeskStaff(viewer.role));
   const isDraft = lot.state === 'draft';
-  const sheets = sheetsOf(detail, board, fees, isOwn);
+  // Who holds a fix is shown what he can agree to: its quotes, not newer ones.
+  const quotes = priceFix?.isMine === true ? (detail.fix?.quotes as QuoteRef[]) : quoteRefs(board);
+  const sheets = sheetsOf(detail, quotes, fees, isOwn);
   const priceMinor = isDraft ? null : priceMinorOf(detail, sheets.sheet);
   return {
     code: lot.code,
@@ -190,7 +214,8 @@ export function presentLot(
     photos: detail.photos.map(photoAnswerOf),
     price: priceMinor === null ? null : moneyAnswer(priceMinor),
     floorPercent: isInside && lot.floorPercent !== null ? percentText(lot.floorPercent) : null,
-    priceWait: priceWaitFor(detail, board),
+    priceWait: wait,
+    priceFix,
     ...sheets,
     nets: isOwn && !isDraft ? netsOf(priceMinor, lot.shippingMinor ?? 0n, fees) : [],
     quoteState: board.state,
@@ -198,6 +223,10 @@ export function presentLot(
     history: presentHistory(detail.events, isInside),
     dealCode: deal === null || deal.liveLotId === null ? null : deal.code,
     draft: isOwn && (isDraft || lot.state === 'returned') ? lotDraft.parse(lot.draft) : null,
-    can: lotRights(viewer, lot, detail.isSellerSuspended),
+    can: lotRights(viewer, lot, {
+      isSellerSuspended: detail.isSellerSuspended,
+      isPriceWaiting: wait !== null,
+      holdsFix: priceFix?.isMine ?? false,
+    }),
   };
 }

@@ -64,6 +64,8 @@ const nothingAllowed: LotAnswer['can'] = {
   reopen: false,
   copy: false,
   buy: false,
+  fixPrice: false,
+  giveUpFix: false,
   pull: false,
 };
 
@@ -88,6 +90,7 @@ function lotAnswer(draft: LotDraft, version: number, part: Partial<LotAnswer> = 
     linkedPercent: null,
     floorPercent: null,
     priceWait: null,
+    priceFix: null,
     shipping: null,
     destinations: [],
     closesAt: null,

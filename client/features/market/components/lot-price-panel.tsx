@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
+import { PriceFixPanel } from '../../../components/figures/price-fix-panel.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { LinkButton } from '../../../components/ui/button.tsx';
 import { Deadline } from '../../../components/ui/time.tsx';
@@ -53,6 +54,7 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
         />
       </div>
       <div className="mt-5 flex flex-col items-start gap-3 border-t border-rule pt-4">
+        <PriceFixPanel lot={lot} />
         <NextStep lot={lot} total={total} isSignedIn={isSignedIn} />
       </div>
     </section>
@@ -114,6 +116,14 @@ function NextStep({ lot, total, isSignedIn }: NextStepProps): ReactNode {
         <p className="text-note text-ink-2">
           The money is held until you have weighed what arrives and accept it.
         </p>
+        {closes}
+      </>
+    );
+  if (lot.linkedPercent && (lot.can.fixPrice || (lot.state === 'open' && lot.priceWait))) return closes;
+  if (lot.linkedPercent && lot.state === 'open' && !isSignedIn)
+    return (
+      <>
+        <LinkButton to={paths.signIn(paths.lot(lot.code))}>Sign in to fix the price</LinkButton>
         {closes}
       </>
     );

@@ -23,6 +23,8 @@ const nothingAllowed: LotAnswer['can'] = {
   reopen: false,
   copy: false,
   buy: false,
+  fixPrice: false,
+  giveUpFix: false,
   pull: false,
 };
 
@@ -70,6 +72,7 @@ function lotAnswer(part: Partial<LotAnswer>): LotAnswer {
     linkedPercent: null,
     floorPercent: null,
     priceWait: null,
+    priceFix: null,
     shipping: usd('20.00'),
     destinations: ['US'],
     closesAt: null,
