@@ -8,6 +8,7 @@ import { reconcilePaymentsJob } from './reconcile-payments.ts';
 import { runChecksJob } from './run-checks.ts';
 import { endPriceFixesJob } from './end-price-fixes.ts';
 import { closeLotsJob } from './close-lots.ts';
+import { pauseBelowFloorJob } from './pause-below-floor.ts';
 import { rekeyLotsJob } from './rekey-lots.ts';
 import { removeStrayFilesJob } from './remove-stray-files.ts';
 import type { Job } from './run-job.ts';
@@ -24,6 +25,7 @@ export const allJobs: readonly Job[] = [
   runChecksJob,
   closeLotsJob,
   endPriceFixesJob,
+  pauseBelowFloorJob,
   rekeyLotsJob,
   removeStrayFilesJob,
 ];

@@ -12,6 +12,7 @@ import { dealRuled } from './deal-ruled.ts';
 import { latePaymentRefunded } from './late-payment-refunded.ts';
 import { lotExamined } from './lot-examined.ts';
 import { lotOpened } from './lot-opened.ts';
+import { lotPausedFloor } from './lot-paused-floor.ts';
 import { lotPulled } from './lot-pulled.ts';
 import { lotReturned } from './lot-returned.ts';
 import { parcelDeliveredBuyer } from './parcel-delivered-buyer.ts';
@@ -37,6 +38,7 @@ export const MAILS = {
   'late-payment-refunded': latePaymentRefunded,
   'lot-examined': lotExamined,
   'lot-opened': lotOpened,
+  'lot-paused-floor': lotPausedFloor,
   'lot-pulled': lotPulled,
   'lot-returned': lotReturned,
   'parcel-delivered-buyer': parcelDeliveredBuyer,
