@@ -44,7 +44,9 @@ export function RegisterTable({ rows, quotedAt, window }: RegisterListProps) {
             Price, US$
           </th>
           <th scope="col" className="py-3 pl-3 text-right font-normal">
-            Closes, {formatZone(quotedAt ?? new Date().toISOString(), timeZone)}
+            <span className="whitespace-nowrap">
+              Closes, {formatZone(quotedAt ?? new Date().toISOString(), timeZone)}
+            </span>
           </th>
         </tr>
       </thead>
