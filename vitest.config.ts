@@ -25,6 +25,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['client/**/*.test.tsx'],
           setupFiles: ['tests/setup/client.ts'],
+          testTimeout: 20_000,
           environmentOptions: { jsdom: { url: 'http://localhost:3000' } },
         },
       },

@@ -1,7 +1,10 @@
 import '@testing-library/jest-dom/vitest';
-import { cleanup } from '@testing-library/react';
+import { cleanup, configure } from '@testing-library/react';
 import { afterAll, afterEach, beforeAll, beforeEach, expect, vi, type MockInstance } from 'vitest';
 import { apiServer } from './api-server.ts';
+
+// A busy machine may take its time; what never comes still fails.
+configure({ asyncUtilTimeout: 6_000 });
 
 let errors: MockInstance<typeof console.error>;
 
