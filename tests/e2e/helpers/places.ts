@@ -56,6 +56,12 @@ const publicPlaces: Place[] = [
     reader: 'nobody',
     address: lot('Gold and silver button, unparted'),
   },
+  {
+    name: 'linked lot',
+    route: '/lots/:code',
+    reader: 'bruna',
+    address: lot('Silver bar from cement silver'),
+  },
   { name: 'sold lot', route: '/lots/:code', reader: 'nobody', address: lot('Gold button, ring shanks') },
   { name: 'lot that is not there', route: '/lots/:code', reader: 'nobody', address: '/lots/S-222222' },
   { name: 'quotes', route: '/quotes', reader: 'nobody', address: '/quotes' },
@@ -204,6 +210,7 @@ const deskPlaces: Place[] = [
     address: '/desk/members?query=ilse',
   },
   { name: 'audit', route: '/desk/audit', reader: 'admin', address: '/desk/audit' },
+  { name: 'given-up mails', route: '/admin/mails', reader: 'admin', address: '/admin/mails' },
 ];
 
 /** Every page in the states that a person can meet. */
