@@ -6,7 +6,9 @@ import { lapseUnfundedDealsJob } from './lapse-unfunded-deals.ts';
 import { performProviderTasksJob } from './perform-provider-tasks.ts';
 import { reconcilePaymentsJob } from './reconcile-payments.ts';
 import { runChecksJob } from './run-checks.ts';
+import { endPriceFixesJob } from './end-price-fixes.ts';
 import { closeLotsJob } from './close-lots.ts';
+import { pauseBelowFloorJob } from './pause-below-floor.ts';
 import { rekeyLotsJob } from './rekey-lots.ts';
 import { removeStrayFilesJob } from './remove-stray-files.ts';
 import type { Job } from './run-job.ts';
@@ -22,6 +24,8 @@ export const allJobs: readonly Job[] = [
   reconcilePaymentsJob,
   runChecksJob,
   closeLotsJob,
+  endPriceFixesJob,
+  pauseBelowFloorJob,
   rekeyLotsJob,
   removeStrayFilesJob,
 ];

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { PRICE_MINOR_MAX } from './limits.ts';
-import { checkPrice } from './lot-submission.ts';
+import { checkPrice } from './lot-pricing.ts';
 import { groupThousands } from './money.ts';
 
 describe('groupThousands', () => {

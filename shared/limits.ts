@@ -33,6 +33,14 @@ export const PAYMENT_MINOR_MAX = 99_999_999n;
 /** Highest price of a lot and highest charge for its parcel, in minor units: together still one card payment. */
 export const PRICE_MINOR_MAX = 99_000_000n;
 export const SHIPPING_MINOR_MAX = 999_999n;
+/** Bounds of a linked price and of an outright price's floor, in % of melt value. */
+export const LINKED_PERCENT_MIN = '1';
+export const LINKED_PERCENT_MAX = '150';
+export const FLOOR_PERCENT_MIN = '1';
+export const FLOOR_PERCENT_MAX = '150';
+/** How long a price fix holds a lot, and how long the same member waits for another one of the same lot. */
+export const PRICE_FIX_MINUTES = 10;
+export const PRICE_FIX_AGAIN_HOURS = 24;
 
 export const LOT_OPEN_DAYS_MAX = 90;
 export const REGISTER_PAGE_SIZE = 25;

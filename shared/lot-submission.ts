@@ -1,16 +1,10 @@
 import { invariant, IssueCollector, MeasureError, type MeasureIssue } from './domain-error.ts';
 import { dayOf, daysLater, isCalendarDay } from './calendar-day.ts';
-import {
-  DESCRIPTION_LENGTH_MAX,
-  LOT_OPEN_DAYS_MAX,
-  PRICE_MINOR_MAX,
-  PRICE_MINOR_MIN,
-  SHIPPING_MINOR_MAX,
-  TITLE_LENGTH_MAX,
-} from './limits.ts';
 import { isCountryCode } from './countries.ts';
+import { DESCRIPTION_LENGTH_MAX, LOT_OPEN_DAYS_MAX, SHIPPING_MINOR_MAX, TITLE_LENGTH_MAX } from './limits.ts';
 import { fromAmount, groupThousands, minorToAmount } from './money.ts';
 import type { MassEntry } from './mass.ts';
+import { readPricing, type ParsedPricing } from './lot-pricing.ts';
 import { parseCertificate, type ParsedCertificate } from './lot-certificate.ts';
 import { readContent, readMass } from './lot-contents.ts';
 import { REFINED_FORMS, type LotDraft } from './schemas/lots.ts';
@@ -26,14 +20,13 @@ export type RefinedForm = (typeof REFINED_FORMS)[number];
 export type LotProblem = { pointer: string; code: string; message: string };
 
 /** A draft that can be submitted, read: numbers in plain notation with the digits typed, sums in cents. */
-export type ParsedLot = {
+export type ParsedLot = ParsedPricing & {
   form: RefinedForm;
   title: string;
   description: string;
   gross: MassEntry;
   readability: MassEntry | null;
   contents: ContentEntry[];
-  priceMinor: bigint;
   shippingMinor: bigint;
   destinations: string[];
   /** The last day on which the lot is open; null for as long as is allowed. */
@@ -57,7 +50,7 @@ export function checkLotDraft(
   const title = issues.attempt(() => readTitle(draft.title));
   const description = issues.attempt(() => readDescription(draft.description));
   const measures = issues.attempt(() => readMeasures(draft));
-  const priceMinor = issues.attempt(() => readPrice(draft.price));
+  const pricing = issues.attempt(() => readPricing(draft));
   const shippingMinor = issues.attempt(() => readShipping(draft.shipping));
   const destinations = issues.attempt(() => readDestinations(draft.destinations));
   const closesOn = issues.attempt(() => ({ day: readClosingDay(draft.closesOn, now) }));
@@ -71,7 +64,7 @@ export function checkLotDraft(
     title === undefined ||
     description === undefined ||
     !measures ||
-    priceMinor === undefined ||
+    !pricing ||
     shippingMinor === undefined ||
     !destinations ||
     !closesOn ||
@@ -79,8 +72,8 @@ export function checkLotDraft(
   ) {
     return { problems, value: null };
   }
-  const terms = { priceMinor, shippingMinor, destinations, closesOn: closesOn.day };
-  return { problems, value: { form, title, description, ...measures, ...terms, certificate } };
+  const terms = { shippingMinor, destinations, closesOn: closesOn.day };
+  return { problems, value: { form, title, description, ...measures, ...pricing, ...terms, certificate } };
 }
 
 function gathered(issues: IssueCollector): readonly MeasureIssue[] {
@@ -189,30 +182,6 @@ function readReadability(draft: LotDraft): MassEntry | null {
   return readMass(draft.readability, '/readability', 'Enter the readability of the balance.');
 }
 
-function readPrice(text: string): bigint {
-  const { minor } = fromAmount(typedDecimal(text, '/price', 'Enter a price.'), '/price');
-  checkPrice(minor);
-  return minor;
-}
-
-/** Refuses a price outside the limits of the house. Throws MeasureError `price-too-low`, `price-too-high` at `/price`. */
-export function checkPrice(minor: bigint): void {
-  if (minor < PRICE_MINOR_MIN) {
-    throw new MeasureError(
-      'price-too-low',
-      '/price',
-      `The lowest price is US$ ${groupThousands(minorToAmount(PRICE_MINOR_MIN))}.`,
-    );
-  }
-  if (minor > PRICE_MINOR_MAX) {
-    throw new MeasureError(
-      'price-too-high',
-      '/price',
-      `The highest price is US$ ${groupThousands(minorToAmount(PRICE_MINOR_MAX))}: more than that a card cannot pay.`,
-    );
-  }
-}
-
 function readShipping(text: string): bigint {
   const missing = 'Enter the charge for the insured parcel; 0 if you bear it.';
   const { minor } = fromAmount(typedDecimal(text, '/shipping', missing), '/shipping');
@@ -287,18 +256,22 @@ export function draftSheetInput(
 ): RefinedSheetInput | null {
   const measures = unlessRefused(() => readMeasures(draft));
   if (!measures) return null;
-  const price = unlessRefused(() => minorToAmount(readPrice(draft.price)));
+  const price = unlessRefused(() => sheetPriceOf(readPricing({ ...draft, floorPercent: '' })));
   const shipping = price === null ? null : unlessRefused(() => minorToAmount(readShipping(draft.shipping)));
   const input: RefinedSheetInput = {
     ...measures,
     quotes: [...quotes],
-    price: price === null ? null : { amount: price },
+    price,
     shipping: shipping === null ? null : { amount: shipping },
     commission,
     moment: 'estimated',
     audience,
   };
   return unlessRefused(() => refinedSheet(input)) ? input : null;
+}
+
+function sheetPriceOf({ priceMinor, linkedPercent }: ParsedPricing): RefinedSheetInput['price'] {
+  return priceMinor === null ? { percent: linkedPercent } : { amount: minorToAmount(priceMinor) };
 }
 
 function unlessRefused<T>(step: () => T): T | null {

@@ -13,6 +13,7 @@ import { dealTakenUp } from './deal-taken-up.ts';
 import { latePaymentRefunded } from './late-payment-refunded.ts';
 import { lotExamined } from './lot-examined.ts';
 import { lotOpened } from './lot-opened.ts';
+import { lotPausedFloor } from './lot-paused-floor.ts';
 import { lotPulled } from './lot-pulled.ts';
 import { lotReturned } from './lot-returned.ts';
 import { parcelDeliveredBuyer } from './parcel-delivered-buyer.ts';
@@ -39,6 +40,7 @@ export const MAILS = {
   'late-payment-refunded': latePaymentRefunded,
   'lot-examined': lotExamined,
   'lot-opened': lotOpened,
+  'lot-paused-floor': lotPausedFloor,
   'lot-pulled': lotPulled,
   'lot-returned': lotReturned,
   'parcel-delivered-buyer': parcelDeliveredBuyer,

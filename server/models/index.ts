@@ -24,6 +24,7 @@ export { Parcel } from './parcel.ts';
 export { Payment } from './payment.ts';
 export { Payout } from './payout.ts';
 export { PayoutAccount } from './payout-account.ts';
+export { PriceFix } from './price-fix.ts';
 export { ProviderEvent } from './provider-event.ts';
 export { ProviderTask } from './provider-task.ts';
 export { Quote } from './quote.ts';

@@ -36,6 +36,9 @@ export class Lot extends Model<InferAttributes<Lot>, InferCreationAttributes<Lot
   declare pricingBasis: CreationOptional<'outright' | 'linked' | 'ascending' | 'tender'>;
   declare settlesOn: CreationOptional<'stated' | 'final'>;
   declare priceMinor: CreationOptional<bigint | null>;
+  /** Share of melt of a linked lot; a lot has this or a sum, never both. */
+  declare linkedPercent: CreationOptional<string | null>;
+  declare floorPercent: CreationOptional<string | null>;
   declare shippingMinor: CreationOptional<bigint | null>;
   declare currency: CreationOptional<string>;
   declare destinations: JsonValue;
@@ -83,6 +86,8 @@ Lot.init(
     pricingBasis: { type: DataTypes.STRING(16), allowNull: false, defaultValue: 'outright' },
     settlesOn: { type: DataTypes.STRING(16), allowNull: false, defaultValue: 'stated' },
     priceMinor: minorColumn('priceMinor', { allowNull: true }),
+    linkedPercent: { type: DataTypes.DECIMAL(8, 4) },
+    floorPercent: { type: DataTypes.DECIMAL(8, 4) },
     shippingMinor: minorColumn('shippingMinor', { allowNull: true }),
     currency: { type: DataTypes.CHAR(3), allowNull: false, defaultValue: 'USD' },
     destinations: { type: DataTypes.JSON, allowNull: false },

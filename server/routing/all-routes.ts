@@ -13,6 +13,7 @@ import { feeRoutes } from '#server/features/fees/fee-routes.ts';
 import { documentRoutes } from '#server/features/lot-documents/document-routes.ts';
 import { lotRoutes } from '#server/features/lots/lot-routes.ts';
 import { mailRoutes } from '#server/features/mails/mail-routes.ts';
+import { priceFixRoutes } from '#server/features/price-fixes/price-fix-routes.ts';
 import { photoRoutes } from '#server/features/photos/photo-routes.ts';
 import { receiptRoutes } from '#server/features/receipts/receipt-routes.ts';
 import { registerRoutes } from '#server/features/register/register-routes.ts';
@@ -37,6 +38,7 @@ const productRoutes: readonly RouteDefinition[] = [
   ...registerRoutes,
   ...feeRoutes,
   ...lotRoutes,
+  ...priceFixRoutes,
   ...photoRoutes,
   ...documentRoutes,
   ...valuationRoutes,

@@ -54,7 +54,13 @@ export const lotDraft = z.object({
   gross: draftQuantity,
   readability: draftQuantity,
   contents: z.array(draftContent).max(20).default([]),
+  /** `outright`, which blank means too, or `linked`. */
+  pricing: text(12),
   price: text(20),
+  /** Share of melt in %, of a linked lot. */
+  linkedPercent: text(20),
+  /** Least share of melt in % that an outright price may come down to while the metal rises; blank: none. */
+  floorPercent: text(20),
   shipping: text(20),
   destinations: z.array(z.string().max(2)).max(60).default([]),
   closesOn: text(10),
@@ -67,7 +73,14 @@ export type LotDraft = z.infer<typeof lotDraft>;
 export const saveDraftRequest = z.object({ draft: lotDraft, version: z.number().int().min(0) });
 export type SaveDraftRequest = z.infer<typeof saveDraftRequest>;
 
-export const priceRequest = z.object({ price: decimalString });
+/** A sum for an outright lot, a share of melt for a linked one. */
+export const priceRequest = z
+  .object({ price: decimalString.optional(), linkedPercent: decimalString.optional() })
+  .refine(({ price, linkedPercent }) => (price === undefined) !== (linkedPercent === undefined), {
+    path: ['price'],
+    message: 'Give a sum or a share of melt',
+  });
+export type PriceRequest = z.infer<typeof priceRequest>;
 export const reasonRequest = z.object({
   reason: z.string().trim().min(5, 'Give a reason in a few words').max(1000),
 });
@@ -133,6 +146,19 @@ export const lotEventAnswer = z.object({
   note: z.string().nullable(),
 });
 
+/** Why linked prices wait: the market is closed until then, a quote is stale, or there is none. */
+export const priceWait = z.object({ reason: z.enum(['closed', 'stale', 'none']), until: instant.nullable() });
+export type PriceWait = z.infer<typeof priceWait>;
+
+export const PRICING_BASES = ['outright', 'linked', 'ascending', 'tender'] as const;
+
+/** The fix that holds a lot now: until when for everyone, the sum only for who holds it. */
+export const lotPriceFix = z.object({
+  isMine: z.boolean(),
+  until: instant,
+  price: moneySchema.nullable(),
+});
+
 export const lotCan = z.object({
   edit: z.boolean(),
   submit: z.boolean(),
@@ -143,6 +169,8 @@ export const lotCan = z.object({
   reopen: z.boolean(),
   copy: z.boolean(),
   buy: z.boolean(),
+  fixPrice: z.boolean(),
+  giveUpFix: z.boolean(),
   pull: z.boolean(),
 });
 
@@ -179,7 +207,15 @@ export const lotAnswer = z.object({
   contents: z.array(contentAnswer),
   evidenceGrade: z.enum(EVIDENCE_GRADE_VALUES),
   certificate: certificatePublicAnswer.nullable(),
+  pricingBasis: z.enum(PRICING_BASES),
+  /** The sum, or what a linked lot's share of melt comes to at the newest accepted quotes; null without a quote. */
   price: moneySchema.nullable(),
+  linkedPercent: decimalString.nullable(),
+  /** Only for the seller and the desk. */
+  floorPercent: decimalString.nullable(),
+  /** Why a linked price cannot be fixed now; null where it can, and for lots that are not linked. */
+  priceWait: priceWait.nullable(),
+  priceFix: lotPriceFix.nullable(),
   shipping: moneySchema.nullable(),
   destinations: z.array(z.string()),
   closesAt: instant.nullable(),
@@ -234,7 +270,10 @@ export const registerRow = z.object({
   uncertaintyPermille: decimalString,
   fineGrams: decimalString,
   fineTroyOunces: decimalString,
-  price: moneySchema,
+  /** The sum, or what the share of melt of a linked lot comes to at the newest accepted quotes. */
+  price: moneySchema.nullable(),
+  linkedPercent: decimalString.nullable(),
+  priceWait: priceWait.nullable(),
   settlesOn: z.enum(['stated', 'final']),
   /** Melt value now with its 95 % range; null without a quote. */
   melt: z.object({ value: decimalString, lowPercent: decimalString, highPercent: decimalString }).nullable(),
@@ -256,6 +295,25 @@ export const registerAnswer = z.object({
 });
 export type RegisterAnswer = z.infer<typeof registerAnswer>;
 
+/** A linked price made a sum, at the quotes that it names. */
+export const priceFixAnswer = z.object({
+  lotCode,
+  percent: decimalString,
+  price: moneySchema,
+  total: moneySchema,
+  until: instant,
+  quotes: z.array(
+    z.object({
+      id: z.string().nullable(),
+      metal: metalSchema,
+      usdPerTroyOunce: decimalString,
+      at: instant.nullable(),
+      source: z.string(),
+    }),
+  ),
+});
+export type PriceFixAnswer = z.infer<typeof priceFixAnswer>;
+
 export const myLotsAnswer = z.object({
   lots: z.array(
     z.object({
@@ -264,6 +322,7 @@ export const myLotsAnswer = z.object({
       title: z.string(),
       form: z.string().nullable(),
       price: moneySchema.nullable(),
+      linkedPercent: decimalString.nullable(),
       thumb: z.string().nullable(),
       stateReason: z.string().nullable(),
       updatedAt: instant,

@@ -65,6 +65,39 @@ describe('recompute', () => {
     expect(recompute(heavier, sheet).differences).toContain('/melt/value');
   });
 
+  it('computes a sheet of the first version by its own rules, and knows no linked price there', () => {
+    const first = refinedSheet(INPUT, '1');
+    expect(first.engineVersion).toBe('1');
+    expect(recompute(INPUT, stored(first))).toEqual({ isEqual: true, differences: [], sheet: first });
+    const linked = { ...INPUT, price: { percent: '98.2' } };
+    expect(() => recompute(linked, first)).toThrowError(
+      expect.objectContaining({ code: 'engine-version-unknown' }),
+    );
+  });
+
+  it('computes a linked price as its percentage of melt, rounded once, and finds it again', () => {
+    const linked: RefinedSheetInput = { ...INPUT, price: { percent: '98.20' }, moment: 'estimated' };
+    const sheet = refinedSheet(refinedSheetInputSchema.parse(stored(linked)));
+    // 20.00 dwt = 1 oz t; 0.95 × 1604.00 = 1523.80; 98.20 % of it is 1496.3716
+    expect(sheet).toMatchObject({ melt: { value: '1523.80' }, price: '1496.37', percentOfMelt: '98.20' });
+    expect(sheet.lines.find(({ key }) => key === 'price')).toEqual({
+      key: 'price',
+      kind: 'price',
+      label: 'Price, 98.20 % of melt',
+      quantity: null,
+      rate: { value: '98.20', unit: '%' },
+      amount: '1496.37',
+      working: ['98.20 % of US$ 1523.80, rounded once: US$ 1496.37'],
+    });
+    expect(recompute(linked, stored(sheet)).isEqual).toBe(true);
+  });
+
+  it.each(['0', '-1', '98.20001', 'x'])('refuses %s as a percentage at its field', (percent) => {
+    expect(() => refinedSheet({ ...INPUT, price: { percent } })).toThrowError(
+      expect.objectContaining({ field: '/price/percent' }),
+    );
+  });
+
   it('refuses a sheet made with rules that are not kept here', () => {
     const sheet = { ...refinedSheet(INPUT), engineVersion: '0' };
     expect(() => recompute(INPUT, sheet)).toThrowError(

@@ -1,5 +1,5 @@
 import { MeasureError } from '../domain-error.ts';
-import { ENGINE_VERSION, refinedSheet } from './refined-sheet.ts';
+import { ENGINE_VERSIONS, refinedSheet } from './refined-sheet.ts';
 import type { RefinedSheetInput, SettlementSheet } from './sheet-types.ts';
 
 /** Outcome of recomputing a stored sheet: equal, or the JSON pointers at which the two differ. */
@@ -14,10 +14,11 @@ export type Recomputation = {
  * Throws MeasureError `engine-version-unknown` for a sheet of rules that are not kept here, and those of `refinedSheet`.
  */
 export function recompute(input: RefinedSheetInput, stored: SettlementSheet): Recomputation {
-  if (stored.engineVersion !== ENGINE_VERSION) {
+  const version = ENGINE_VERSIONS.find((known) => known === stored.engineVersion);
+  if (version === undefined) {
     throw new MeasureError('engine-version-unknown', '/engineVersion', 'These rules are not known here.');
   }
-  const sheet = refinedSheet(input);
+  const sheet = refinedSheet(input, version);
   const differences = differingPointers(sheet, stored, '');
   return { isEqual: differences.length === 0, differences, sheet };
 }

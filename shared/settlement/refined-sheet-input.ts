@@ -37,7 +37,7 @@ export const refinedSheetInputSchema: z.ZodType<RefinedSheetInput> = z.strictObj
   balanceClass: z.enum(BALANCE_CLASSES).nullable().optional(),
   contents: z.array(contentSchema).max(METALS.length + OTHER_ELEMENTS.length),
   quotes: z.array(quoteRefSchema).max(METALS.length),
-  price: amountSchema.nullable(),
+  price: z.union([amountSchema, z.strictObject({ percent: text })]).nullable(),
   shipping: amountSchema.nullable(),
   commission: z.strictObject({ method: z.string().max(40), percent: text, minimum: text }).nullable(),
   weightStep: text.optional(),

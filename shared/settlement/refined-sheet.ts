@@ -1,4 +1,4 @@
-import { fixed } from '../decimal.ts';
+import { fixed, parseDecimal } from '../decimal.ts';
 import { IssueCollector, MeasureError, invariant } from '../domain-error.ts';
 import { MASS_UNIT_LABELS } from '../mass.ts';
 import { METAL_NAMES } from '../metals.ts';
@@ -6,12 +6,21 @@ import { fromAmount, minorToAmount } from '../money.ts';
 import { explainCommission } from './commission.ts';
 import { measureLot, type LotMeasures } from './lot-measures.ts';
 import { computeMelt, type MeltComputation } from './melt.ts';
-import { percentOfMelt } from './percent-of-melt.ts';
+import { percentOfMelt, priceAtPercentOfMelt } from './percent-of-melt.ts';
 import type { RefinedSheetInput, SettlementSheet, SheetLine } from './sheet-types.ts';
 import { massWorking, meltWorking, metalWorking } from './working.ts';
 
-/** Version of the rules below. A stored sheet names the version it was made with and recomputes under it. */
-export const ENGINE_VERSION = '1';
+/**
+ * Versions of the rules below, oldest first. A stored sheet names the version it was made with and recomputes under it.
+ * 1: a price is a sum. 2: a price may be a share of the melt value; all else is as in 1.
+ */
+export const ENGINE_VERSIONS = ['1', '2'] as const;
+
+/** A version of the rules that is kept here. */
+export type EngineVersion = (typeof ENGINE_VERSIONS)[number];
+
+/** The version that new sheets are made with. */
+export const ENGINE_VERSION: EngineVersion = '2';
 
 type Terms = {
   readonly priceMinor: bigint | null;
@@ -20,30 +29,40 @@ type Terms = {
 };
 
 /**
- * The settlement sheet of a refined lot sold outright. Pure: the same input gives the same sheet, and every amount can
+ * The settlement sheet of a refined lot, sold outright or linked to its melt value. Pure: the same input gives the same sheet, and every amount can
  * be re-added by hand. All numbers are plain decimal strings; amounts in US dollars.
  *
  * The buyer's sheet ends with what goes into escrow (price + insured parcel); the seller's with what goes to him (price
  * − commission + insured parcel). Without a price both end at the melt value and `total` is null.
+ * A linked price is its percentage of the melt value, rounded once to the cent.
  * Throws one MeasureError with every issue: the codes of `measureLot`, `computeMelt`, `fromAmount`, `commissionFor`, and
- * `amount-negative`, `shipping-without-price`, `commission-missing` (a seller's sheet with a price names its commission).
+ * `amount-negative`, `shipping-without-price`, `commission-missing` (a seller's sheet with a price names its commission),
+ * `engine-version-unknown` for a linked price under version 1.
  */
-export function refinedSheet(input: RefinedSheetInput): SettlementSheet {
+export function refinedSheet(
+  input: RefinedSheetInput,
+  engineVersion: EngineVersion = ENGINE_VERSION,
+): SettlementSheet {
+  assertPriceKnown(input, engineVersion);
   const issues = new IssueCollector();
   const measures = issues.attempt(() => measureLot(input));
   const melt = measures && issues.attempt(() => computeMelt(measures, input.quotes, input.weightStep));
-  const terms = issues.attempt(() => readTerms(input));
+  const terms = issues.attempt(() => readTerms(input, melt?.valueMinor ?? null));
   issues.finish();
   invariant(measures && melt && terms, 'every refusal is reported');
-  const percent = terms.priceMinor === null ? null : percentOfMelt(terms.priceMinor, melt.valueMinor);
+  const percent = shownPercent(input, terms.priceMinor, melt.valueMinor);
   const total = totalLine(input, terms);
   return {
-    engineVersion: ENGINE_VERSION,
+    engineVersion,
     moment: input.moment,
     currency: 'USD',
     audience: input.audience,
     quotes: melt.metals.map(({ quote }) => ({ ...quote })),
-    lines: [...meltLines(measures, melt), ...priceLines(input, terms, percent), ...(total ? [total] : [])],
+    lines: [
+      ...meltLines(measures, melt),
+      ...priceLines(input, terms, { percent, meltValue: melt.figure.value }),
+      ...(total ? [total] : []),
+    ],
     fine: melt.metals.map(({ metal, grams, troyOuncesText }) => ({
       metal,
       grams: fixed(grams, 6),
@@ -58,9 +77,27 @@ export function refinedSheet(input: RefinedSheetInput): SettlementSheet {
   };
 }
 
-function readTerms(input: RefinedSheetInput): Terms {
+function assertPriceKnown({ price }: RefinedSheetInput, engineVersion: EngineVersion): void {
+  if (engineVersion !== '1' || price === null || 'amount' in price) return;
+  throw new MeasureError('engine-version-unknown', '/engineVersion', 'These rules know no linked price.');
+}
+
+/** A linked price stands at its own percentage, whatever the rounding to the cent makes of it. */
+function shownPercent(input: RefinedSheetInput, priceMinor: bigint | null, meltMinor: bigint): string | null {
+  if (priceMinor === null) return null;
+  return linkedPercentOf(input) ?? percentOfMelt(priceMinor, meltMinor);
+}
+
+/** Without a melt value, which is refused elsewhere, a linked price stays unknown. */
+function readPrice(price: RefinedSheetInput['price'], meltMinor: bigint | null): bigint | null {
+  if (price === null || 'amount' in price) return readAmount(price, '/price/amount');
+  const percent = parseDecimal(price.percent, { field: '/price/percent', maxDecimals: 4, above: '0' });
+  return meltMinor === null ? null : priceAtPercentOfMelt(meltMinor, fixed(percent, 4));
+}
+
+function readTerms(input: RefinedSheetInput, meltMinor: bigint | null): Terms {
   const issues = new IssueCollector();
-  const priceMinor = issues.attempt(() => readAmount(input.price, '/price/amount'));
+  const priceMinor = issues.attempt(() => readPrice(input.price, meltMinor));
   const shippingMinor = issues.attempt(() => readAmount(input.shipping, '/shipping/amount'));
   if (input.price === null && input.shipping !== null) {
     issues.add('shipping-without-price', '/shipping', 'A parcel is charged only together with a price.');
@@ -124,7 +161,11 @@ function meltLines(measures: LotMeasures, melt: MeltComputation): SheetLine[] {
   ];
 }
 
-function priceLines(input: RefinedSheetInput, terms: Terms, percent: string | null): SheetLine[] {
+function priceLines(
+  input: RefinedSheetInput,
+  terms: Terms,
+  { percent, meltValue }: { percent: string | null; meltValue: string },
+): SheetLine[] {
   const { priceMinor, shippingMinor, commission } = terms;
   if (priceMinor === null) return [];
   const price = minorToAmount(priceMinor);
@@ -132,14 +173,11 @@ function priceLines(input: RefinedSheetInput, terms: Terms, percent: string | nu
     {
       key: 'price',
       kind: 'price',
-      label: input.moment === 'estimated' ? 'Price asked' : 'Price agreed',
+      label: priceLabel(input),
       quantity: null,
       rate: percent === null ? null : { value: percent, unit: '%' },
       amount: price,
-      working: [
-        `Price of the metal, a sum: US$ ${price}` +
-          (percent === null ? '' : `, ${percent} % of the melt value`),
-      ],
+      working: [priceWorking(input, meltValue, price, percent)],
     },
   ];
   if (commission !== null && input.commission !== null) {
@@ -161,6 +199,31 @@ function priceLines(input: RefinedSheetInput, terms: Terms, percent: string | nu
     });
   }
   return lines;
+}
+
+/** The percentage of a linked price with at least two digits after the dot, as it was agreed. */
+function linkedPercentOf({ price }: RefinedSheetInput): string | null {
+  if (price === null || 'amount' in price) return null;
+  const percent = parseDecimal(price.percent);
+  return fixed(percent, Math.max(2, percent.decimalPlaces()));
+}
+
+function priceLabel(input: RefinedSheetInput): string {
+  const linked = linkedPercentOf(input);
+  if (linked !== null) return `Price, ${linked} % of melt`;
+  return input.moment === 'estimated' ? 'Price asked' : 'Price agreed';
+}
+
+function priceWorking(
+  input: RefinedSheetInput,
+  meltValue: string,
+  price: string,
+  percent: string | null,
+): string {
+  const linked = linkedPercentOf(input);
+  if (linked !== null) return `${linked} % of US$ ${meltValue}, rounded once: US$ ${price}`;
+  const share = percent === null ? '' : `, ${percent} % of the melt value`;
+  return `Price of the metal, a sum: US$ ${price}${share}`;
 }
 
 function commissionLine(

@@ -78,14 +78,17 @@ export type ContentEntry = {
 /** The commission terms a seller's sheet is made with: rate of one payment method and the least sum. */
 export type CommissionTerms = { method: string; percent: string; minimum: string };
 
-/** All that a sheet of a refined lot sold outright is computed from; stored as it is and recomputed from. */
+/** A price as it is agreed: a sum, or a share of the melt value that the sheet turns into a sum. */
+export type SheetPrice = { amount: string } | { percent: string };
+
+/** All that a sheet of a refined lot is computed from; stored as it is and recomputed from. */
 export type RefinedSheetInput = {
   gross: MassEntry;
   readability: MassEntry | null;
   balanceClass?: BalanceClass | null | undefined;
   contents: ContentEntry[];
   quotes: QuoteRef[];
-  price: { amount: string } | null;
+  price: SheetPrice | null;
   shipping: { amount: string } | null;
   commission: CommissionTerms | null;
   weightStep?: string | undefined;

@@ -8,7 +8,7 @@ const forBuyers: Record<LotAnswer['state'], string> = {
   returned: 'The assay desk has returned it to the seller; it is not offered.',
   open: 'It is offered, but this account cannot buy.',
   reserved:
-    'Reserved: a buyer has agreed to it and has a short time to pay. If that time runs out it is offered again.',
+    'Reserved: a buyer has agreed to it and has a short time to pay, or holds its price. If that time runs out it is offered again.',
   sold: 'Sold: it is paid for and cannot be bought any more.',
   paused: 'The seller has paused it; it cannot be bought for now.',
   closed: 'Closed: it is not offered any more.',

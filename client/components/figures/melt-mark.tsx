@@ -7,6 +7,14 @@ export function MeltMarkShape({ kind, x, y }: MeltMarkShapeProps) {
   switch (kind) {
     case 'price':
       return <path d={`M${x - 6} ${y - 13}h12L${x} ${y - 2}z`} className="fill-verdigris" />;
+    case 'linked':
+      return (
+        <path
+          d={`M${x - 6} ${y - 13}h12L${x} ${y - 2}z M${x - 6} ${y - 17}h12`}
+          className="fill-sheet stroke-verdigris"
+          strokeWidth="1.6"
+        />
+      );
     case 'leading':
       return <path d={`M${x} ${y - 14}l5.5 5.5-5.5 5.5-5.5-5.5z`} className="fill-ink" />;
     case 'reserve':

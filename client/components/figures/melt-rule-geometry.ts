@@ -1,5 +1,5 @@
 /** What can stand on the rule, each told by its shape. */
-export type MeltMarkKind = 'reserve' | 'leading' | 'price' | 'limit' | 'floor';
+export type MeltMarkKind = 'reserve' | 'leading' | 'price' | 'linked' | 'limit' | 'floor';
 export type MeltMark = { kind: MeltMarkKind; percent: string };
 export type MeltBand = { low: string; high: string };
 export type RuleWindow = { low: number; high: number };

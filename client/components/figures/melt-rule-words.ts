@@ -3,6 +3,7 @@ import type { MeltBand, MeltMark, MeltMarkKind } from './melt-rule-geometry.ts';
 
 export const markNames: Record<MeltMarkKind, string> = {
   price: 'price',
+  linked: 'linked',
   leading: 'leading',
   reserve: 'reserve',
   limit: 'your limit',

@@ -20,6 +20,8 @@ export type DemoLot = {
   contents: readonly DemoContent[];
   /** Price as a percentage of the melt value of the day of writing, as a plain number. */
   percentOfMelt: string;
+  /** Priced as that share of melt, which moves with the quote, instead of as a sum. */
+  isLinked?: boolean;
   shipping: string;
   laboratory: 0 | 1 | 2;
   reportNumber: string;

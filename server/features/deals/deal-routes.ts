@@ -12,7 +12,8 @@ import { NotFoundError } from '#server/app-error.ts';
 import { withIdempotentTransaction } from '#server/database/idempotent-transaction.ts';
 import { databaseNow } from '#server/database/transaction.ts';
 import { lotIdOf } from '#server/features/lots/own-lot.ts';
-import { newestQuotes } from '#server/features/quotes/quote-queries.ts';
+import { pauseBelowFloor } from '#server/features/lots/pause-below-floor.ts';
+import { newestQuotes, quoteRefs } from '#server/features/quotes/quote-queries.ts';
 import { renderSheetPdf } from '#server/features/sheets/sheet-pdf.ts';
 import { defineRoute, type RouteDefinition } from '#server/routing/define-route.ts';
 import { acceptDeal } from './accept-deal.ts';
@@ -27,6 +28,17 @@ import { purchaseLot } from './purchase-lot.ts';
 import { shipDeal } from './ship-deal.ts';
 
 type DealParams = z.infer<typeof dealParams>;
+
+const BELOW_FLOOR = {
+  status: 409,
+  answer: {
+    refusal: {
+      code: 'price-below-floor',
+      detail:
+        'The metal has risen past the floor that the seller set; the lot is paused until it is priced anew.',
+    },
+  },
+};
 
 const purchaseRoute = defineRoute<z.infer<typeof lotParams>, unknown, z.infer<typeof purchaseRequest>>({
   method: 'post',
@@ -45,6 +57,8 @@ const purchaseRoute = defineRoute<z.infer<typeof lotParams>, unknown, z.infer<ty
       idempotency,
       { lots: [lotId] },
       async (unit) => {
+        // The refusal is the answer, so that the pause is written with it.
+        if (await pauseBelowFloor({ lotId, quotes: quoteRefs(quotes) }, unit)) return BELOW_FLOOR;
         const { total, delivery } = body;
         const deal = await purchaseLot({ lotId, total, delivery }, { ...unit, quotes }, actor);
         return { status: 201, answer: await answerDeal(deal.id, actor, unit) };

@@ -7,7 +7,7 @@ import { ConflictError, invariant } from '#server/app-error.ts';
 import { newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { lotEntryOf, lotSheetInput } from '#server/features/lots/lot-entry.ts';
-import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
+import type { QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import type { Deal } from '#server/models/deal.ts';
 import { DealSheet } from '#server/models/deal-sheet.ts';
 import type { Lot } from '#server/models/lot.ts';
@@ -15,6 +15,9 @@ import { LotAssay } from '#server/models/lot-assay.ts';
 import type { DealSide } from './deal-policy.ts';
 
 type Terms = Pick<Deal, 'commissionPercent' | 'commissionMinimumMinor' | 'paymentMethod'>;
+
+/** The quotes of the agreement; the board tells how old they are, and is null where a price fix has named fresh ones. */
+type QuotesAgreed = { quotes: readonly QuoteRef[]; board: QuoteBoard | null };
 
 /**
  * What the deal's sheets are computed from: the lot as it stands, the terms of the deal, and the quotes of the moment. It is
@@ -24,7 +27,7 @@ type Terms = Pick<Deal, 'commissionPercent' | 'commissionMinimumMinor' | 'paymen
 export async function sheetInputFor(
   lot: Lot,
   terms: Terms,
-  board: QuoteBoard,
+  { quotes, board }: QuotesAgreed,
   unit: Unit,
 ): Promise<RefinedSheetInput> {
   const assays = await LotAssay.findAll({
@@ -39,9 +42,10 @@ export async function sheetInputFor(
     percent: terms.commissionPercent,
     minimum: minorToAmount(terms.commissionMinimumMinor),
   };
-  const used = quoteRefs(board).filter(({ metal }) => paid.includes(metal));
-  const isMarketClosed = board.state === 'closed';
-  const isFresh = ({ metal }: QuoteRef) => !isMarketClosed && board.byMetal[metal]?.isFresh === true;
+  const used = quotes.filter(({ metal }) => paid.includes(metal));
+  const isMarketClosed = board?.state === 'closed';
+  const isFresh = ({ metal }: QuoteRef) =>
+    board === null || (!isMarketClosed && board.byMetal[metal]?.isFresh === true);
   const input: RefinedSheetInput = {
     ...lotSheetInput(lot, entry, used, commission),
     shipping: { amount: minorToAmount(lot.shippingMinor ?? 0n) },

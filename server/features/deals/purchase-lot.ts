@@ -4,6 +4,7 @@ import { fromAmount } from '#shared/money.ts';
 import { RULES_VERSION } from '#shared/rules.ts';
 import type { PurchaseRequest } from '#shared/schemas/deals.ts';
 import { commissionFor } from '#shared/settlement/commission.ts';
+import type { QuoteRef } from '#shared/settlement/sheet-types.ts';
 import {
   AppError,
   ConflictError,
@@ -16,11 +17,14 @@ import { newCode, newId } from '#server/database/ids.ts';
 import type { Unit } from '#server/database/transaction.ts';
 import { openDealAccounts } from '#server/features/ledger/open-accounts.ts';
 import { currentFees } from '#server/features/fees/fee-queries.ts';
-import { moveLot } from '#server/features/lots/move-lot.ts';
-import type { QuoteBoard } from '#server/features/quotes/quote-queries.ts';
+import { moveLot, recordLotEvent } from '#server/features/lots/move-lot.ts';
+import { useFix } from '#server/features/price-fixes/end-price-fix.ts';
+import { openFixOf } from '#server/features/price-fixes/price-fix-queries.ts';
+import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import { Deal } from '#server/models/deal.ts';
 import { Lot } from '#server/models/lot.ts';
 import { Member } from '#server/models/member.ts';
+import type { PriceFix } from '#server/models/price-fix.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { fundByFrom } from './deadlines.ts';
 import { sheetInputFor, storeDealSheets } from './deal-sheets.ts';
@@ -31,20 +35,47 @@ export type PurchaseInput = Pick<PurchaseRequest, 'total' | 'delivery'> & { lotI
 /** A lot that has not been in the market; of one that was, a buyer is told that it no longer is. */
 const NEVER_SHOWN: readonly Lot['state'][] = ['draft', 'submitted', 'returned'];
 
-type PricedLot = Lot & { priceMinor: bigint };
+/** What is agreed: the lot, its sum, the quotes that the sheets rest on, and the price fix that this uses up. */
+type Offer = {
+  lot: Lot;
+  priceMinor: bigint;
+  quotes: QuoteRef[];
+  board: QuoteBoard | null;
+  fix: PriceFix | null;
+};
 
-async function readBuyableLot(lotId: string, unit: Unit, actor: Actor): Promise<PricedLot> {
+/** An outright price stands by itself; the quotes only say what the metal is worth. */
+function outrightOffer(lot: Lot, board: QuoteBoard): Offer {
+  if (lot.state === 'reserved') throw new ConflictError('lot-taken');
+  if (lot.state !== 'open' || lot.pricingBasis !== 'outright' || lot.priceMinor === null)
+    throw new ConflictError('lot-not-open');
+  return { lot, priceMinor: lot.priceMinor, quotes: quoteRefs(board), board, fix: null };
+}
+
+/** A linked price is bought inside the buyer's own fix alone, at exactly its sum and quotes, and before it ends. */
+async function fixedOffer(lot: Lot, unit: Unit, actor: Actor): Promise<Offer> {
+  if (lot.state === 'open') throw new ConflictError('price-fix-required');
+  const fix = await openFixOf(lot.id, unit.tx);
+  if (lot.state !== 'reserved') throw new ConflictError('lot-not-open');
+  if (fix === null || fix.memberId !== actor.id) throw new ConflictError('lot-taken');
+  if (unit.now >= fix.fixedUntil) throw new ConflictError('price-fix-ended');
+  return { lot, priceMinor: fix.priceMinor, quotes: fix.quotes as QuoteRef[], board: null, fix };
+}
+
+async function readOffer(lotId: string, unit: Unit & { quotes: QuoteBoard }, actor: Actor): Promise<Offer> {
   const lot = await Lot.findByPk(lotId, { transaction: unit.tx });
   if (lot === null || (lot.sellerId !== actor.id && NEVER_SHOWN.includes(lot.state)))
     throw new NotFoundError();
   if (lot.sellerId === actor.id) throw new ConflictError('own-lot');
-  if (lot.state === 'reserved' || lot.state === 'sold') throw new ConflictError('lot-taken');
+  if (lot.state === 'sold') throw new ConflictError('lot-taken');
+  const offer =
+    lot.pricingBasis === 'linked' ? await fixedOffer(lot, unit, actor) : outrightOffer(lot, unit.quotes);
   const isPastClosing = lot.closesAt !== null && lot.closesAt.getTime() <= unit.now.getTime();
-  const isOffered = lot.state === 'open' && lot.pricingBasis === 'outright' && lot.settlesOn === 'stated';
-  if (!isOffered || isPastClosing || lot.priceMinor === null) throw new ConflictError('lot-not-open');
+  if (lot.settlesOn !== 'stated' || (isPastClosing && offer.fix === null))
+    throw new ConflictError('lot-not-open');
   const seller = await Member.findByPk(lot.sellerId, { transaction: unit.tx });
   if (seller === null || seller.suspendedAt !== null) throw new ConflictError('lot-not-open');
-  return lot as PricedLot;
+  return offer;
 }
 
 async function assertMayBuy(unit: Unit, actor: Actor): Promise<void> {
@@ -77,10 +108,14 @@ function assertTotal(given: string, totalMinor: bigint): void {
   );
 }
 
-async function insertDeal(lot: PricedLot, input: PurchaseInput, unit: Unit, actor: Actor): Promise<Deal> {
+async function insertDeal(
+  { lot, priceMinor }: Offer,
+  input: PurchaseInput,
+  unit: Unit,
+  actor: Actor,
+): Promise<Deal> {
   const fee = (await currentFees(unit.now, unit.tx)).find(({ method }) => method === 'card');
   invariant(fee !== undefined, 'every payment method has a rate');
-  const { priceMinor } = lot;
   const shippingMinor = lot.shippingMinor ?? 0n;
   const { delivery } = input;
   try {
@@ -122,14 +157,27 @@ async function insertDeal(lot: PricedLot, input: PurchaseInput, unit: Unit, acto
   }
 }
 
+/** Within a fix the lot is reserved already; that it is now for a deal stands in its history all the same. */
+async function reserveLot({ lot, fix }: Offer, deal: Deal, unit: Unit, actor: Actor): Promise<void> {
+  const detail = { dealCode: deal.code };
+  const act = { act: 'reserved', actorKind: 'buyer', actorId: actor.id, detail } as const;
+  if (fix === null) {
+    await moveLot(lot, 'reserved', act, unit);
+    return;
+  }
+  await useFix(fix, deal.id, unit);
+  await recordLotEvent(lot, act, unit);
+}
+
 /**
- * Makes the one deal over a lot at its outright price. Everything is computed here: price, parcel, total, commission at the
- * rate valid now, and both provisional sheets at the newest accepted quotes; the buyer's total is only compared. The
- * address is frozen into the deal. The lot is reserved until the deal is funded or lapses.
+ * Makes the one deal over a lot at its outright price, or inside the buyer's own price fix at exactly its sum and quotes.
+ * Everything is computed here: price, parcel, total, commission at the rate valid now, and both provisional sheets at the
+ * newest accepted quotes or the fix's; the buyer's total is only compared. The address is frozen into the deal. The lot is
+ * reserved until the deal is funded or lapses.
  *
  * Expects the lot's guard row to be locked; a UNIQUE key on the live deal of a lot stands behind it.
- * Throws `not-found`, `own-lot`, `lot-taken`, `lot-not-open`, `member-suspended`, `destination-not-served`,
- * `price-changed`, `no-fresh-quote`, `invalid-input`.
+ * Throws `not-found`, `own-lot`, `lot-taken`, `lot-not-open`, `price-fix-required`, `price-fix-ended`, `member-suspended`,
+ * `destination-not-served`, `price-changed`, `no-fresh-quote`, `invalid-input`.
  */
 export async function purchaseLot(
   input: PurchaseInput,
@@ -137,15 +185,15 @@ export async function purchaseLot(
   actor: Actor,
 ): Promise<Deal> {
   await assertMayBuy(unit, actor);
-  const lot = await readBuyableLot(input.lotId, unit, actor);
+  const offer = await readOffer(input.lotId, unit, actor);
+  const { lot, priceMinor } = offer;
   assertServed(lot, input.delivery.country);
-  assertTotal(input.total, lot.priceMinor + (lot.shippingMinor ?? 0n));
-  const deal = await insertDeal(lot, input, unit, actor);
+  assertTotal(input.total, priceMinor + (lot.shippingMinor ?? 0n));
+  const deal = await insertDeal(offer, input, unit, actor);
   await openDealAccounts(deal.id, unit);
-  const sheetInput = await sheetInputFor(lot, deal, unit.quotes, unit);
+  const sheetInput = await sheetInputFor(lot, deal, offer, unit);
   await storeDealSheets(deal.id, 'provisional', sheetInput, unit);
-  const who = { actorKind: 'buyer', actorId: actor.id } as const;
-  await moveLot(lot, 'reserved', { act: 'reserved', ...who, detail: { dealCode: deal.code } }, unit);
-  await recordAgreement(deal, { act: 'agreed', ...who }, unit);
+  await reserveLot(offer, deal, unit, actor);
+  await recordAgreement(deal, { act: 'agreed', actorKind: 'buyer', actorId: actor.id }, unit);
   return deal;
 }

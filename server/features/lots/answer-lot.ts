@@ -11,5 +11,5 @@ export async function answerLot(code: string, viewer: Actor | null): Promise<Lot
   const detail = await findLotDetail(code, viewer);
   const now = await databaseNow();
   const [board, fees] = await Promise.all([newestQuotes(now), currentFees(now)]);
-  return presentLot(detail, { viewer, board, fees });
+  return presentLot(detail, { viewer, board, fees, now });
 }

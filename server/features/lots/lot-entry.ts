@@ -1,4 +1,5 @@
 import { isAssayMethodKey } from '#shared/assay/methods.ts';
+import { dec, plain } from '#shared/decimal.ts';
 import { isFinenessUnit, type FinenessEntry } from '#shared/fineness.ts';
 import { isMassUnit, type MassEntry } from '#shared/mass.ts';
 import { isMetal, isOtherElement } from '#shared/metals.ts';
@@ -51,6 +52,12 @@ export function lotEntryOf(lot: Lot, assays: readonly LotAssay[]): LotEntry | nu
   };
 }
 
+/** A lot's price as its sheet takes it: a sum, or the share of melt that a linked lot stands at. */
+function sheetPriceOf({ priceMinor, linkedPercent }: Lot): RefinedSheetInput['price'] {
+  if (linkedPercent !== null) return { percent: plain(dec(linkedPercent)) };
+  return priceMinor === null ? null : { amount: minorToAmount(priceMinor) };
+}
+
 /** Input of a lot's estimated sheet; with a commission it is the seller's. */
 export function lotSheetInput(
   lot: Lot,
@@ -58,14 +65,15 @@ export function lotSheetInput(
   quotes: readonly QuoteRef[],
   commission: CommissionTerms | null = null,
 ): RefinedSheetInput {
-  const hasPrice = lot.priceMinor !== null;
+  const price = sheetPriceOf(lot);
   return {
     gross: entry.gross,
     readability: entry.readability,
     contents: [...entry.contents],
     quotes: [...quotes],
-    price: lot.priceMinor === null ? null : { amount: minorToAmount(lot.priceMinor) },
-    shipping: hasPrice && lot.shippingMinor !== null ? { amount: minorToAmount(lot.shippingMinor) } : null,
+    price,
+    shipping:
+      price !== null && lot.shippingMinor !== null ? { amount: minorToAmount(lot.shippingMinor) } : null,
     commission,
     moment: 'estimated',
     audience: commission === null ? 'buyer' : 'seller',

@@ -15,14 +15,21 @@ const PUBLIC_ACTS: ReadonlySet<string> = new Set([
   'paused',
   'reopened',
   'reserved',
+  'price-fixed',
+  'fix-ran-out',
+  'fix-given-up',
 ]);
 
 /** A reason is for the seller and the desk; that a price has changed is for all. */
 function noteOf(event: LotEvent, isInside: boolean): string | null {
-  const detail = event.detail as { reason?: unknown; from?: unknown; to?: unknown } | null;
+  const detail = event.detail as
+    ({ reason?: unknown; from?: unknown; to?: unknown } & Record<string, unknown>) | null;
   if (isInside && typeof detail?.reason === 'string') return detail.reason;
   if (event.act === 'price-changed' && typeof detail?.from === 'string' && typeof detail.to === 'string') {
     return `US$ ${detail.from} → US$ ${detail.to}`;
+  }
+  if (event.act === 'price-changed' && typeof detail?.fromPercent === 'string') {
+    return `linked ${detail.fromPercent} % → ${String(detail.toPercent)} %`;
   }
   return null;
 }

@@ -5,7 +5,8 @@ import type { Actor } from '#server/routing/define-route.ts';
 import type { Deal } from '#server/models/deal.ts';
 import type { Lot } from '#server/models/lot.ts';
 
-type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'>;
+type LotRow = Pick<Lot, 'sellerId' | 'state' | 'assayVersion'> &
+  Partial<Pick<Lot, 'floorPercent' | 'pricingBasis'>>;
 type Viewer = Pick<Actor, 'id' | 'role' | 'suspendedAt'> | null;
 
 export function isSeller(viewer: Viewer, lot: Pick<Lot, 'sellerId'>): boolean {
@@ -24,27 +25,47 @@ export function canDraftLots(viewer: Viewer): boolean {
 }
 
 export type LotRights = Record<
-  'edit' | 'submit' | 'redraft' | 'changePrice' | 'withdraw' | 'pause' | 'reopen' | 'copy' | 'buy' | 'pull',
+  | 'edit'
+  | 'submit'
+  | 'redraft'
+  | 'changePrice'
+  | 'withdraw'
+  | 'pause'
+  | 'reopen'
+  | 'copy'
+  | 'buy'
+  | 'fixPrice'
+  | 'giveUpFix'
+  | 'pull',
   boolean
 >;
 
 const PULLABLE: readonly LotState[] = ['submitted', 'open', 'paused'];
 
+/** How a lot stands beside its own row. */
+export type LotStanding = { isSellerSuspended: boolean; isPriceWaiting: boolean; holdsFix: boolean };
+
 /** What a viewer may do with a lot as it stands; the commands ask the same questions again. */
-export function lotRights(viewer: Viewer, lot: LotRow, isSellerSuspended: boolean): LotRights {
+export function lotRights(viewer: Viewer, lot: LotRow, standing: LotStanding): LotRights {
   const isOwn = isSeller(viewer, lot);
   const mayChange = isOwn && canDraftLots(viewer);
-  const mayBuy = viewer !== null && viewer.role !== 'lab' && viewer.suspendedAt === null;
+  const { isSellerSuspended, isPriceWaiting, holdsFix } = standing;
+  const mayBuy =
+    viewer !== null && viewer.role !== 'lab' && viewer.suspendedAt === null && !isOwn && !isSellerSuspended;
+  const isLinked = lot.pricingBasis === 'linked';
   return {
     edit: mayChange && lot.state === 'draft',
     submit: mayChange && lot.state === 'draft',
     redraft: mayChange && lot.state === 'returned',
-    changePrice: mayChange && lot.state === 'open',
+    changePrice:
+      mayChange && (lot.state === 'open' || (lot.state === 'paused' && typeof lot.floorPercent === 'string')),
     withdraw: mayChange && canLotBecome(lot.state, 'withdrawn'),
     pause: mayChange && lot.state === 'open',
     reopen: mayChange && lot.state === 'paused',
     copy: mayChange && lot.state !== 'draft',
-    buy: mayBuy && !isOwn && lot.state === 'open' && !isSellerSuspended,
+    buy: mayBuy && (isLinked ? lot.state === 'reserved' && holdsFix : lot.state === 'open'),
+    fixPrice: mayBuy && isLinked && lot.state === 'open' && !isPriceWaiting,
+    giveUpFix: holdsFix,
     pull: viewer !== null && isDeskStaff(viewer.role) && !isOwn && PULLABLE.includes(lot.state),
   };
 }

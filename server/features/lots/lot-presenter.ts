@@ -1,13 +1,21 @@
 import { dec, plain } from '#shared/decimal.ts';
 import { MeasureError } from '#shared/domain-error.ts';
 import { draftSheetInput } from '#shared/lot-submission.ts';
-import { minorToAmount } from '#shared/money.ts';
+import { percentText } from '#shared/lot-pricing.ts';
+import { isMetal } from '#shared/metals.ts';
+import { fromAmount, minorToAmount } from '#shared/money.ts';
 import { isDeskStaff } from '#shared/roles.ts';
-import { lotDraft, type ContentAnswer, type LotAnswer } from '#shared/schemas/lots.ts';
+import { lotDraft, type ContentAnswer, type LotAnswer, type PriceWait } from '#shared/schemas/lots.ts';
 import { explainCommission } from '#shared/settlement/commission.ts';
 import { refinedSheet } from '#shared/settlement/refined-sheet.ts';
-import type { CommissionTerms, RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
+import type {
+  CommissionTerms,
+  QuoteRef,
+  RefinedSheetInput,
+  SettlementSheet,
+} from '#shared/settlement/sheet-types.ts';
 import { photoAnswerOf } from '#server/features/photos/photo-answer.ts';
+import { priceWaitOf } from '#server/features/quotes/price-wait.ts';
 import { quoteRefs, type QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 import { moneyAnswer } from '#server/money-answer.ts';
 import type { LotAssay } from '#server/models/lot-assay.ts';
@@ -52,8 +60,12 @@ function termsOf(fee: CurrentFee): CommissionTerms {
 
 type Sheets = Pick<LotAnswer, 'sheet' | 'sellerSheet'>;
 
-function sheetsOf(detail: LotDetail, board: QuoteBoard, fees: readonly CurrentFee[], isOwn: boolean): Sheets {
-  const quotes = quoteRefs(board);
+function sheetsOf(
+  detail: LotDetail,
+  quotes: readonly QuoteRef[],
+  fees: readonly CurrentFee[],
+  isOwn: boolean,
+): Sheets {
   const fee = fees.find(({ method }) => method === SHOWN_METHOD);
   const commission = isOwn && fee !== undefined ? termsOf(fee) : null;
   if (detail.lot.state === 'draft') {
@@ -101,10 +113,24 @@ type Figures = Pick<
   | 'gross'
   | 'readability'
   | 'contents'
-  | 'price'
+  | 'pricingBasis'
+  | 'linkedPercent'
   | 'shipping'
   | 'destinations'
 >;
+
+/** The sum, or what the share of melt of a linked lot comes to on its sheet. */
+function priceMinorOf({ lot }: LotDetail, sheet: SettlementSheet | null): bigint | null {
+  if (lot.linkedPercent === null) return lot.priceMinor;
+  return sheet === null || sheet.price === null ? null : fromAmount(sheet.price).minor;
+}
+
+/** Why a linked lot's price cannot be fixed now. */
+function priceWaitFor({ lot, assays }: LotDetail, board: QuoteBoard): PriceWait | null {
+  if (lot.state === 'draft' || lot.linkedPercent === null) return null;
+  const paid = assays.flatMap(({ element, isPaidFor }) => (isPaidFor && isMetal(element) ? [element] : []));
+  return priceWaitOf(board, paid);
+}
 
 /** While a draft is being typed, what was submitted before is nobody's business; the editor reads the draft itself. */
 function figuresOf({ lot, assays }: LotDetail): Figures {
@@ -117,7 +143,8 @@ function figuresOf({ lot, assays }: LotDetail): Figures {
       gross: null,
       readability: null,
       contents: [],
-      price: null,
+      pricingBasis: draft.pricing === 'linked' ? 'linked' : 'outright',
+      linkedPercent: null,
       shipping: null,
       destinations: draft.destinations,
     };
@@ -136,21 +163,39 @@ function figuresOf({ lot, assays }: LotDetail): Figures {
         ? null
         : { value: readabilityValue, unit: readabilityUnit },
     contents: assays.map(presentContent),
-    price: lot.priceMinor === null ? null : moneyAnswer(lot.priceMinor),
+    pricingBasis: lot.pricingBasis,
+    linkedPercent: lot.linkedPercent === null ? null : percentText(lot.linkedPercent),
     shipping: lot.shippingMinor === null ? null : moneyAnswer(lot.shippingMinor),
     destinations: lot.destinations as string[],
   };
 }
 
+type Viewing = { viewer: Actor | null; board: QuoteBoard; fees: readonly CurrentFee[]; now: Date };
+
+/** Everyone may know until when a lot is held; the sum is between its holder and the house. */
+function presentFix({ fix }: LotDetail, { viewer, now }: Viewing): LotAnswer['priceFix'] {
+  if (fix === null || now >= fix.fixedUntil) return null;
+  const isMine = viewer !== null && viewer.id === fix.memberId;
+  return {
+    isMine,
+    until: fix.fixedUntil.toISOString(),
+    price: isMine ? moneyAnswer(fix.priceMinor) : null,
+  };
+}
+
 /** A lot as a viewer may see it: never an address; the draft, nets and reasons only for the seller (and the desk). */
-export function presentLot(
-  detail: LotDetail,
-  { viewer, board, fees }: { viewer: Actor | null; board: QuoteBoard; fees: readonly CurrentFee[] },
-): LotAnswer {
+export function presentLot(detail: LotDetail, viewing: Viewing): LotAnswer {
+  const { viewer, board, fees } = viewing;
   const { lot, deal } = detail;
+  const wait = priceWaitFor(detail, board);
+  const priceFix = presentFix(detail, viewing);
   const isOwn = isSeller(viewer, lot);
   const isInside = isOwn || (viewer !== null && isDeskStaff(viewer.role));
   const isDraft = lot.state === 'draft';
+  // Who holds a fix is shown what he can agree to: its quotes, not newer ones.
+  const quotes = priceFix?.isMine === true ? (detail.fix?.quotes as QuoteRef[]) : quoteRefs(board);
+  const sheets = sheetsOf(detail, quotes, fees, isOwn);
+  const priceMinor = isDraft ? null : priceMinorOf(detail, sheets.sheet);
   return {
     code: lot.code,
     state: lot.state,
@@ -167,13 +212,21 @@ export function presentLot(
     closesAt: lot.closesAt?.toISOString() ?? null,
     openedAt: lot.openedAt?.toISOString() ?? null,
     photos: detail.photos.map(photoAnswerOf),
-    ...sheetsOf(detail, board, fees, isOwn),
-    nets: isOwn && !isDraft ? netsOf(lot.priceMinor, lot.shippingMinor ?? 0n, fees) : [],
+    price: priceMinor === null ? null : moneyAnswer(priceMinor),
+    floorPercent: isInside && lot.floorPercent !== null ? percentText(lot.floorPercent) : null,
+    priceWait: wait,
+    priceFix,
+    ...sheets,
+    nets: isOwn && !isDraft ? netsOf(priceMinor, lot.shippingMinor ?? 0n, fees) : [],
     quoteState: board.state,
     stateReason: isInside ? lot.stateReason : null,
     history: presentHistory(detail.events, isInside),
     dealCode: deal === null || deal.liveLotId === null ? null : deal.code,
     draft: isOwn && (isDraft || lot.state === 'returned') ? lotDraft.parse(lot.draft) : null,
-    can: lotRights(viewer, lot, detail.isSellerSuspended),
+    can: lotRights(viewer, lot, {
+      isSellerSuspended: detail.isSellerSuspended,
+      isPriceWaiting: wait !== null,
+      holdsFix: priceFix?.isMine ?? false,
+    }),
   };
 }

@@ -9,6 +9,7 @@ import { LotAssay } from '#server/models/lot-assay.ts';
 import { LotEvent } from '#server/models/lot-event.ts';
 import { LotPhoto } from '#server/models/lot-photo.ts';
 import { Member } from '#server/models/member.ts';
+import { PriceFix } from '#server/models/price-fix.ts';
 import { StoredFile } from '#server/models/stored-file.ts';
 import type { Actor } from '#server/routing/define-route.ts';
 import { canSeeLot } from './lot-policy.ts';
@@ -21,6 +22,8 @@ export type LotDetail = {
   events: LotEvent[];
   completedDeals: number;
   isSellerSuspended: boolean;
+  /** The price fix that holds the lot, whoever has it. */
+  fix: PriceFix | null;
   /** The viewer's own deal over this lot, as its buyer or seller. */
   deal: Deal | null;
 };
@@ -78,7 +81,7 @@ async function findCertificate(lot: Lot): Promise<Certificate | null> {
 /** Everything that the page of a lot shows. Throws `not-found`. */
 export async function findLotDetail(code: string, viewer: Actor | null): Promise<LotDetail> {
   const { lot, deal } = await findVisibleLot({ code }, viewer);
-  const [assays, photos, certificate, events, completedDeals, seller] = await Promise.all([
+  const [assays, photos, certificate, events, completedDeals, seller, fix] = await Promise.all([
     LotAssay.findAll({
       where: { lotId: lot.id, assayVersion: lot.assayVersion },
       order: [['position', 'ASC']],
@@ -94,9 +97,10 @@ export async function findLotDetail(code: string, viewer: Actor | null): Promise
     }),
     countCompletedDeals(lot.sellerId),
     Member.findByPk(lot.sellerId, { attributes: ['suspendedAt'] }),
+    PriceFix.findOne({ where: { openLotId: lot.id } }),
   ]);
   const isSellerSuspended = seller !== null && seller.suspendedAt !== null;
-  return { lot, assays, photos, certificate, events, completedDeals, isSellerSuspended, deal };
+  return { lot, assays, photos, certificate, events, completedDeals, isSellerSuspended, fix, deal };
 }
 
 /** First photo of each of several lots, by lot. */

@@ -1,3 +1,4 @@
+import { percentText } from '#shared/lot-pricing.ts';
 import { lotDraft, type MyLotsAnswer } from '#shared/schemas/lots.ts';
 import { photoUrl } from '#server/features/photos/photo-answer.ts';
 import { moneyAnswer } from '#server/money-answer.ts';
@@ -34,6 +35,7 @@ export async function findMyLots(actor: Actor): Promise<MyLotsAnswer> {
         title: (draft === null ? lot.title : draft.title) ?? '',
         form: draft === null ? lot.form : draft.form === '' ? null : draft.form,
         price: draft !== null || lot.priceMinor === null ? null : moneyAnswer(lot.priceMinor),
+        linkedPercent: draft !== null || lot.linkedPercent === null ? null : percentText(lot.linkedPercent),
         thumb: photoId === undefined ? null : photoUrl(photoId, 240),
         stateReason: lot.stateReason,
         updatedAt: lot.updatedAt.toISOString(),

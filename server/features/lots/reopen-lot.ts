@@ -15,5 +15,10 @@ export async function reopenLot({ lotId }: { lotId: string }, unit: Unit, actor:
     throw new ConflictError('illegal-transition', 'Only a paused lot can be reopened.');
   }
   if (lot.closesAt !== null && lot.closesAt <= unit.now) throw new ConflictError('deadline-passed');
-  return moveLot(lot, 'open', { act: 'reopened', actorKind: 'seller', actorId: actor.id }, unit);
+  return moveLot(
+    lot,
+    'open',
+    { act: 'reopened', actorKind: 'seller', actorId: actor.id, changes: { stateReason: null } },
+    unit,
+  );
 }

@@ -54,12 +54,14 @@ export async function answerRegister(query: RegisterQuery, viewer: Actor | null)
   const hasMore = found.length > query.limit && last !== undefined;
   const refs = quoteRefs(board);
   return {
-    rows: (await readSources(page)).map((source) => presentRegisterRow(source, refs, viewer)),
+    rows: (await readSources(page)).map((source) =>
+      presentRegisterRow(source, { quotes: refs, board, viewer }),
+    ),
     nextCursor: hasMore
       ? writeCursor({
           sort: query.sort,
           quotes,
-          position: { metal: query.sort === 'newest' ? null : last.metal, value: last.value, id: last.id },
+          position: { stream: query.sort === 'newest' ? null : last.stream, value: last.value, id: last.id },
         })
       : null,
     count: Math.min(count, REGISTER_COUNT_MAX),

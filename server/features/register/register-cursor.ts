@@ -10,8 +10,11 @@ import type { QuoteBoard } from '#server/features/quotes/quote-queries.ts';
 /** US$ per troy ounce by metal: what a listing is ranked at from its first page to its last. */
 export type RankQuotes = Partial<Record<Metal, string>>;
 
-/** Where a page ended: the sort's own value of the last row, its metal where streams are merged, and its id. */
-export type Position = { metal: Metal | null; value: string | null; id: string };
+/** What is ranked together: the sums of one metal, or the linked lots of all metals, whose key is their percentage. */
+export type Stream = Metal | 'linked';
+
+/** Where a page ended: the sort's own value of the last row, its stream where streams are merged, and its id. */
+export type Position = { stream: Stream | null; value: string | null; id: string };
 
 export type Cursor = { sort: RegisterQuery['sort']; quotes: RankQuotes; position: Position };
 
@@ -27,7 +30,7 @@ const rate = z.string().refine((text) => {
 const wire = z.object({
   s: z.enum(REGISTER_SORTS),
   q: z.partialRecord(metalSchema, rate),
-  m: metalSchema.nullable(),
+  m: z.union([metalSchema, z.literal('linked')]).nullable(),
   v: z
     .string()
     .max(40)
@@ -48,7 +51,7 @@ export function rankQuotesOf(board: QuoteBoard): RankQuotes {
 
 /** A cursor names the quotes of its listing, so that pages fit together even when the quote moves in between. */
 export function writeCursor({ sort, quotes, position }: Cursor): string {
-  const body = { s: sort, q: quotes, m: position.metal, v: position.value, i: position.id };
+  const body = { s: sort, q: quotes, m: position.stream, v: position.value, i: position.id };
   return Buffer.from(JSON.stringify(body)).toString('base64url');
 }
 
@@ -69,5 +72,5 @@ export function readCursor(text: string, sort: RegisterQuery['sort']): Cursor {
     throw new InvalidError([{ pointer: '/cursor', code: 'cursor-unknown', message }]);
   }
   const { q, m, v, i } = parsed.data;
-  return { sort, quotes: q, position: { metal: m, value: v, id: i } };
+  return { sort, quotes: q, position: { stream: m, value: v, id: i } };
 }

@@ -2,12 +2,22 @@ import { cut, dec, plain } from '#shared/decimal.ts';
 import { GRAMS_PER_TROY_OUNCE } from '#shared/mass.ts';
 import { METALS, type Metal } from '#shared/metals.ts';
 import type { RegisterQuery } from '#shared/schemas/lots.ts';
-import type { RankQuotes } from './register-cursor.ts';
+import type { RankQuotes, Stream } from './register-cursor.ts';
 
 /** A piece of a WHERE clause with its values, in the order of the question marks. */
 export type Clause = { sql: string; values: (string | Date)[] };
 
+/** Digits after the dot of the key of each kind of stream, as its column holds them. */
 export const RANK_DECIMALS = 8;
+export const LINKED_DECIMALS = 4;
+
+/**
+ * What a stream's key is divided by to compare it with other streams'. A sum's key is US$ per fine gram, at the quote per
+ * troy ounce; a linked lot's is the percentage itself, which is worth the same at any quote.
+ */
+export function rateOf(stream: Stream, quotes: RankQuotes): string | undefined {
+  return stream === 'linked' ? plain(dec(GRAMS_PER_TROY_OUNCE).times(100)) : quotes[stream];
+}
 
 export function allOf(clauses: readonly Clause[]): Clause {
   return {
@@ -51,13 +61,28 @@ function percentClause({ percentMin, percentMax }: RegisterQuery, metal: Metal, 
   return { sql, values };
 }
 
+/** A linked lot stands at its percentage; the bounds hold for it as they are. */
+function linkedPercentClause({ percentMin, percentMax }: RegisterQuery): Clause {
+  const values: string[] = [];
+  let sql = 'lots.linked_percent IS NOT NULL';
+  if (percentMin !== undefined) {
+    sql += ' AND lots.linked_percent >= CAST(? AS DECIMAL(50,20))';
+    values.push(percentMin);
+  }
+  if (percentMax !== undefined) {
+    sql += ' AND lots.linked_percent <= CAST(? AS DECIMAL(50,20))';
+    values.push(percentMax);
+  }
+  return { sql, values };
+}
+
 function percentClauses(query: RegisterQuery, metals: readonly Metal[], quotes: RankQuotes): Clause[] {
   if (query.percentMin === undefined && query.percentMax === undefined) return [];
   const options = metals.flatMap((metal) => {
     const rate = quotes[metal];
     return rate === undefined ? [] : [percentClause(query, metal, rate)];
   });
-  if (options.length === 0) return [{ sql: 'FALSE', values: [] }];
+  options.push(linkedPercentClause(query));
   return [
     {
       sql: options.map(({ sql }) => `(${sql})`).join(' OR '),

@@ -5,20 +5,32 @@ import { REGISTER_COUNT_MAX } from '#shared/limits.ts';
 import type { Metal } from '#shared/metals.ts';
 import type { RegisterQuery } from '#shared/schemas/lots.ts';
 import { sequelize } from '#server/database/connection.ts';
-import type { Position, RankQuotes } from './register-cursor.ts';
-import { allOf, filtersOf, metalsOf, only, RANK_DECIMALS, type Clause } from './register-filters.ts';
+import type { Position, RankQuotes, Stream } from './register-cursor.ts';
+import {
+  allOf,
+  filtersOf,
+  LINKED_DECIMALS,
+  metalsOf,
+  only,
+  RANK_DECIMALS,
+  rateOf,
+  type Clause,
+} from './register-filters.ts';
 
 /** A row of the listing before its lot is read: what it is ordered by. */
-export type Ranked = { id: string; metal: Metal; value: string | null };
+export type Ranked = { id: string; stream: Stream; value: string | null };
 
 type Listing = { query: RegisterQuery; quotes: RankQuotes; after: Position | null };
 
 const OPEN = only('lots.state', 'open');
 const ofMetal = (metal: Metal) => only('lots.main_metal', metal);
 
-async function select(where: Clause, { value, order }: { value: string; order: string }, limit: number) {
+type Reading = { value: string; order: string; stream?: string };
+
+async function select(where: Clause, reading: Reading, limit: number) {
+  const { value, order, stream = 'lots.main_metal' } = reading;
   return sequelize.query<Ranked>(
-    `SELECT lots.id, lots.main_metal AS metal, ${value} AS value FROM lots
+    `SELECT lots.id, ${stream} AS stream, ${value} AS value FROM lots
      WHERE ${where.sql} ORDER BY ${order} LIMIT ${limit}`,
     { replacements: where.values, type: QueryTypes.SELECT },
   );
@@ -73,8 +85,8 @@ async function byFineContent({ query, quotes, after }: Listing, limit: number): 
 
 /** The order of % of melt value across metals: key ÷ rate, lowest first; rows that cannot be ranked at the end, by id. */
 function percentOrder(quotes: RankQuotes) {
-  const indexOf = ({ metal, value }: Ranked): Dec | null => {
-    const rate = quotes[metal];
+  const indexOf = ({ stream, value }: Ranked): Dec | null => {
+    const rate = rateOf(stream, quotes);
     return value === null || rate === undefined ? null : dec(value).div(rate);
   };
   return (left: Ranked, right: Ranked): number => {
@@ -84,46 +96,67 @@ function percentOrder(quotes: RankQuotes) {
   };
 }
 
+const KEYS = {
+  sum: { column: 'lots.rank_price', type: 'DECIMAL(30,8)', decimals: RANK_DECIMALS },
+  linked: { column: 'lots.linked_percent', type: 'DECIMAL(8,4)', decimals: LINKED_DECIMALS },
+} as const;
+
+const keyOf = (stream: Stream) => (stream === 'linked' ? KEYS.linked : KEYS.sum);
+
 /**
- * Rows of one metal after a position of another: `key ÷ rate` is compared exactly by carrying the position's key over to
- * this metal's rate. A key has eight decimals, so what lies above the quotient lies above its first eight.
+ * Rows of one stream after a position of another: `key ÷ rate` is compared exactly by carrying the position's key over to
+ * this stream's rate. A key has so many decimals, so what lies above the quotient lies above its first ones.
  */
-function afterPosition(after: Position, rate: string, quotes: RankQuotes): Clause {
-  invariant(after.metal !== null && after.value !== null, 'a ranked position has its metal and key');
-  const own = quotes[after.metal];
-  invariant(own !== undefined, 'a ranked position has its quote');
+function afterPosition(after: Position, stream: Stream, quotes: RankQuotes): Clause {
+  invariant(after.stream !== null && after.value !== null, 'a ranked position has its stream and key');
+  const [rate, own] = [rateOf(stream, quotes), rateOf(after.stream, quotes)];
+  invariant(rate !== undefined && own !== undefined, 'a ranked position has its quote');
+  const { column, type, decimals } = keyOf(stream);
   const exact = dec(after.value).times(rate).div(own);
-  const bound = cut(exact, RANK_DECIMALS);
+  const bound = cut(exact, decimals);
   const isTieable = dec(bound).times(own).eq(dec(after.value).times(rate));
-  if (!isTieable) return { sql: 'lots.rank_price > CAST(? AS DECIMAL(30,8))', values: [bound] };
+  if (!isTieable) return { sql: `${column} > CAST(? AS ${type})`, values: [bound] };
   return {
-    sql: `lots.rank_price >= CAST(? AS DECIMAL(30,8)) AND
-          (lots.rank_price > CAST(? AS DECIMAL(30,8)) OR lots.id > ?)`,
+    sql: `${column} >= CAST(? AS ${type}) AND (${column} > CAST(? AS ${type}) OR lots.id > ?)`,
     values: [bound, bound, after.id],
   };
 }
 
-/** Cheapest in % of melt value first: one stream a metal by the index on its static key, merged at the listing's quotes. */
+/** The linked lots stand in an index of their own, which names the metal only to filter by it. */
+function streamClauses(stream: Stream, metal: Metal | undefined): Clause[] {
+  const { column } = keyOf(stream);
+  const ranked = { sql: `${column} IS NOT NULL`, values: [] };
+  if (stream !== 'linked') return [OPEN, ofMetal(stream), ranked];
+  return metal === undefined
+    ? [OPEN, ranked]
+    : [OPEN, ranked, { sql: 'lots.main_metal = ?', values: [metal] }];
+}
+
+function streamReading(stream: Stream): Reading {
+  const { column: value } = keyOf(stream);
+  return stream === 'linked'
+    ? { value, order: `lots.state, ${value}, lots.id`, stream: `'linked'` }
+    : { value, order: `lots.state, lots.main_metal, ${value}, lots.id` };
+}
+
+/**
+ * Cheapest in % of melt value first: one stream a metal by the index on its static key, and one of the linked lots by their
+ * percentage, merged at the listing's quotes.
+ */
 async function byPercent(listing: Listing, limit: number): Promise<Ranked[]> {
   const { query, quotes, after } = listing;
   const filters = filtersOf(query, quotes);
   const quoted = metalsOf(query).filter((metal) => quotes[metal] !== undefined);
   const isPastRanked = after !== null && after.value === null;
-  const streams = isPastRanked
-    ? []
-    : await Promise.all(
-        quoted.map((metal) => {
-          const clauses = [OPEN, ofMetal(metal), ...filters];
-          clauses.push({ sql: 'lots.rank_price IS NOT NULL', values: [] });
-          if (after !== null) clauses.push(afterPosition(after, quotes[metal] ?? '', quotes));
-          return select(
-            allOf(clauses),
-            { value: 'lots.rank_price', order: 'lots.state, lots.main_metal, lots.rank_price, lots.id' },
-            limit,
-          );
-        }),
-      );
-  const ranked = streams.flat().sort(percentOrder(quotes)).slice(0, limit);
+  const streams: Stream[] = isPastRanked ? [] : [...quoted, 'linked'];
+  const found = await Promise.all(
+    streams.map((stream) => {
+      const clauses = [...streamClauses(stream, query.metal), ...filters];
+      if (after !== null) clauses.push(afterPosition(after, stream, quotes));
+      return select(allOf(clauses), streamReading(stream), limit);
+    }),
+  );
+  const ranked = found.flat().sort(percentOrder(quotes)).slice(0, limit);
   if (ranked.length === limit) return ranked;
   return [...ranked, ...(await unranked(listing, quoted, limit - ranked.length))];
 }
@@ -138,7 +171,7 @@ async function unranked(
   const afterId = after !== null && after.value === null ? after.id : null;
   const streams = await Promise.all(
     metalsOf(query).map((metal) => {
-      const clauses = [OPEN, ofMetal(metal), ...filters];
+      const clauses = [OPEN, ofMetal(metal), { sql: 'lots.linked_percent IS NULL', values: [] }, ...filters];
       if (quoted.includes(metal)) clauses.push({ sql: 'lots.rank_price IS NULL', values: [] });
       if (afterId !== null) clauses.push({ sql: 'lots.id > ?', values: [afterId] });
       return select(allOf(clauses), { value: 'NULL', order: 'lots.id' }, limit);

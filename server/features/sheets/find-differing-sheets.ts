@@ -1,7 +1,7 @@
 import { Op } from 'sequelize';
 import { minorToAmount } from '#shared/money.ts';
 import { recompute } from '#shared/settlement/recompute.ts';
-import { ENGINE_VERSION } from '#shared/settlement/refined-sheet.ts';
+import { ENGINE_VERSIONS } from '#shared/settlement/refined-sheet.ts';
 import type { RefinedSheetInput, SettlementSheet } from '#shared/settlement/sheet-types.ts';
 import { Deal } from '#server/models/deal.ts';
 import { DealSheet } from '#server/models/deal-sheet.ts';
@@ -27,7 +27,7 @@ export async function findDifferingSheets(): Promise<string[]> {
   const faults: string[] = [];
   for (let after = ''; ;) {
     const rows = await DealSheet.findAll({
-      where: { engineVersion: ENGINE_VERSION, id: { [Op.gt]: after } },
+      where: { engineVersion: [...ENGINE_VERSIONS], id: { [Op.gt]: after } },
       order: [['id', 'ASC']],
       limit: PAGE,
     });

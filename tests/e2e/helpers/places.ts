@@ -56,6 +56,12 @@ const publicPlaces: Place[] = [
     reader: 'nobody',
     address: lot('Gold and silver button, unparted'),
   },
+  {
+    name: 'linked lot',
+    route: '/lots/:code',
+    reader: 'bruna',
+    address: lot('Silver bar from cement silver'),
+  },
   { name: 'sold lot', route: '/lots/:code', reader: 'nobody', address: lot('Gold button, ring shanks') },
   { name: 'lot that is not there', route: '/lots/:code', reader: 'nobody', address: '/lots/S-222222' },
   { name: 'quotes', route: '/quotes', reader: 'nobody', address: '/quotes' },

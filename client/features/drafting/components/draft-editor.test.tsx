@@ -64,6 +64,8 @@ const nothingAllowed: LotAnswer['can'] = {
   reopen: false,
   copy: false,
   buy: false,
+  fixPrice: false,
+  giveUpFix: false,
   pull: false,
 };
 
@@ -83,7 +85,12 @@ function lotAnswer(draft: LotDraft, version: number, part: Partial<LotAnswer> = 
     contents: [],
     evidenceGrade: 'declared',
     certificate: null,
+    pricingBasis: 'outright',
     price: null,
+    linkedPercent: null,
+    floorPercent: null,
+    priceWait: null,
+    priceFix: null,
     shipping: null,
     destinations: [],
     closesAt: null,

@@ -93,7 +93,7 @@ export function DraftEditor({ lot, draft: kept, evidence, onSubmitted }: DraftEd
           </div>
         </form>
         <div className="lg:sticky lg:top-4 lg:max-h-[calc(100dvh-2rem)] lg:overflow-y-auto lg:pt-6">
-          <LiveSheet live={live} />
+          <LiveSheet live={live} isLinked={draft.pricing === 'linked'} />
         </div>
       </div>
       {!wasSubmitted && (

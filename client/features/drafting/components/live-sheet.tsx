@@ -13,14 +13,20 @@ import { LIVE_SHEET_ID } from './sheet-line.tsx';
 const methodNames: Record<NetLine['method'], string> = { card: 'card', bank_debit: 'bank debit' };
 
 /** What the lot is worth and what it would pay out, from what is typed and the newest quotes. */
-export function LiveSheet({ live: { sheet, nets, quotes } }: { live: LiveSheetFigures }) {
+export function LiveSheet({
+  live: { sheet, nets, quotes },
+  isLinked,
+}: {
+  live: LiveSheetFigures;
+  isLinked: boolean;
+}) {
   return (
     <section aria-labelledby={LIVE_SHEET_ID} className="flex flex-col gap-5">
       <h2 id={LIVE_SHEET_ID} tabIndex={-1} className="scroll-mt-4">
         What it comes to
       </h2>
       {quotes && <QuoteRemark quotes={quotes} sheet={sheet} />}
-      {sheet ? <Rule sheet={sheet} /> : <Waiting quotes={quotes} />}
+      {sheet ? <Rule sheet={sheet} isLinked={isLinked} /> : <Waiting quotes={quotes} />}
       {nets.length > 0 && <Nets nets={nets} />}
       {sheet && <SettlementSheetView sheet={sheet} title="Your sheet" />}
     </section>
@@ -65,13 +71,15 @@ function Waiting({ quotes }: { quotes: QuotesAnswer | undefined }) {
   );
 }
 
-function Rule({ sheet }: { sheet: SettlementSheet }) {
+function Rule({ sheet, isLinked }: { sheet: SettlementSheet; isLinked: boolean }) {
   const at = sheet.quotes.map((quote) => quote.at).sort()[0] ?? null;
   return (
     <div className="sheet p-4">
       <MeltRule
         band={bandOf(sheet.melt)}
-        marks={sheet.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
+        marks={
+          sheet.percentOfMelt ? [{ kind: isLinked ? 'linked' : 'price', percent: sheet.percentOfMelt }] : []
+        }
         quote={{ at }}
       />
     </div>

@@ -6,6 +6,7 @@ import { useNow } from '../../../lib/use-now.ts';
 import { fieldIdOf } from '../../../components/lot-form/field-ids.ts';
 import { useDraftForm } from '../../../components/lot-form/draft-form-context.ts';
 import { DestinationPicker } from './destination-picker.tsx';
+import { PricingFields } from './pricing-fields.tsx';
 import { FormSection } from '../../../components/lot-form/form-section.tsx';
 
 /** What the buyer pays, where the parcel goes, how long the lot is open. */
@@ -16,19 +17,10 @@ export function TermsSection() {
     <FormSection
       id="section-terms"
       title="Price, parcel and time"
-      sub="A fixed sum for the metal. It can change while the lot is open, never once a buyer has agreed."
+      sub="A fixed sum for the metal, or a share of its melt value. It can change while the lot is open, never once a buyer has agreed."
     >
+      <PricingFields />
       <div className="grid grid-cols-1 items-start gap-6 sm:grid-cols-2">
-        <Field id={fieldIdOf('/price')} label="Price of the metal, US$" error={errorAt('/price')}>
-          {(ties) => (
-            <NumberInput
-              {...ties}
-              maxLength={20}
-              value={draft.price}
-              onChange={({ target: { value } }) => change((before) => ({ ...before, price: value }))}
-            />
-          )}
-        </Field>
         <Field
           id={fieldIdOf('/shipping')}
           label="Insured parcel, US$"

@@ -69,7 +69,17 @@ export type DraftProblems = ReturnType<typeof useDraftProblems>;
 const isSame = (left: LotProblem, right: LotProblem) =>
   left.pointer === right.pointer && left.message === right.message;
 
-const LAST_PARTS = ['price', 'shipping', 'destinations', 'closesOn', 'confirmsCautions', 'confirmsTitle'];
+const LAST_PARTS = [
+  'pricing',
+  'price',
+  'linkedPercent',
+  'floorPercent',
+  'shipping',
+  'destinations',
+  'closesOn',
+  'confirmsCautions',
+  'confirmsTitle',
+];
 
 /** The check names terms before the certificate; the form asks for them after it. */
 function inFormOrder(problems: LotProblem[]): LotProblem[] {

@@ -1,10 +1,10 @@
 import type { UseQueryResult } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { RegisterAnswer, RegisterRow } from '#shared/schemas/lots.ts';
+import { AskedPrice } from '../../../components/figures/asked-price.tsx';
 import { Fineness } from '../../../components/figures/fineness.tsx';
 import { formName, lotForms } from '../../../components/figures/lot-words.tsx';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
-import { Money } from '../../../components/figures/money.tsx';
 import { QuoteStateNotice } from '../../../components/figures/quote-state-notice.tsx';
 import { Quantity } from '../../../components/figures/quantity.tsx';
 import { SpecimenDrawing } from '../../../components/figures/specimen-drawing.tsx';
@@ -73,13 +73,15 @@ function Line({ row, quotedAt }: LineProps) {
         <MeltRule
           size="row"
           band={melt && { low: melt.lowPercent, high: melt.highPercent }}
-          marks={percentOfMelt ? [{ kind: 'price', percent: percentOfMelt }] : []}
+          marks={
+            percentOfMelt ? [{ kind: row.linkedPercent ? 'linked' : 'price', percent: percentOfMelt }] : []
+          }
           quote={melt && quotedAt ? { at: quotedAt } : null}
         />
       </div>
       <div className="lg:text-right">
         <span className="block text-note text-ink-2">price</span>
-        <Money value={row.price.amount} className="font-medium" />
+        <AskedPrice row={row} />
       </div>
     </li>
   );

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { MeltRule } from '../../../components/figures/melt-rule.tsx';
+import { PriceFixPanel } from '../../../components/figures/price-fix-panel.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { LinkButton } from '../../../components/ui/button.tsx';
 import { Deadline } from '../../../components/ui/time.tsx';
@@ -18,7 +19,8 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
   const total = totalOf(lot);
   return (
     <section aria-label="Price and purchase" className="sheet p-5">
-      {price && (
+      {lot.linkedPercent && <LinkedPrice lot={lot} total={total} />}
+      {price && !lot.linkedPercent && (
         <>
           <p className="text-note text-ink-2">Outright price</p>
           <p className="text-head leading-tight">
@@ -43,14 +45,44 @@ export function LotPricePanel({ lot, isSignedIn }: LotPricePanelProps) {
       <div className="mt-5">
         <MeltRule
           band={sheet && bandOf(sheet.melt)}
-          marks={sheet?.percentOfMelt ? [{ kind: 'price', percent: sheet.percentOfMelt }] : []}
+          marks={
+            sheet?.percentOfMelt
+              ? [{ kind: lot.linkedPercent ? 'linked' : 'price', percent: sheet.percentOfMelt }]
+              : []
+          }
           quote={sheet && { at: sheetQuotedAt(sheet) }}
         />
       </div>
       <div className="mt-5 flex flex-col items-start gap-3 border-t border-rule pt-4">
+        <PriceFixPanel lot={lot} />
         <NextStep lot={lot} total={total} isSignedIn={isSignedIn} />
       </div>
     </section>
+  );
+}
+
+/** The share of melt first, because it is what the seller asks; the sum follows the quote, or waits. */
+function LinkedPrice({ lot, total }: { lot: LotAnswer; total: string | null }) {
+  const { price, priceWait, linkedPercent, shipping } = lot;
+  return (
+    <>
+      <p className="text-note text-ink-2">Price linked to the melt value</p>
+      <p className="text-head leading-tight">linked {formatPercent(linkedPercent ?? '0')}</p>
+      <p className="text-note text-ink-2">
+        {price && (
+          <>
+            {priceWait ? 'At the last quotes' : 'Now'} <Money value={price.amount} />
+            {shipping && total && (
+              <>
+                ; with the insured parcel of <Money value={shipping.amount} />, <Money value={total} /> in all
+              </>
+            )}
+            .{' '}
+          </>
+        )}
+        It follows the quote.
+      </p>
+    </>
   );
 }
 
@@ -84,6 +116,14 @@ function NextStep({ lot, total, isSignedIn }: NextStepProps): ReactNode {
         <p className="text-note text-ink-2">
           The money is held until you have weighed what arrives and accept it.
         </p>
+        {closes}
+      </>
+    );
+  if (lot.linkedPercent && (lot.can.fixPrice || (lot.state === 'open' && lot.priceWait))) return closes;
+  if (lot.linkedPercent && lot.state === 'open' && !isSignedIn)
+    return (
+      <>
+        <LinkButton to={paths.signIn(paths.lot(lot.code))}>Sign in to fix the price</LinkButton>
         {closes}
       </>
     );

@@ -58,7 +58,8 @@ export function FineContent({ row }: { row: RegisterRow }) {
 }
 
 export function rowMarks(row: RegisterRow): MeltMark[] {
-  return row.percentOfMelt === null ? [] : [{ kind: 'price', percent: row.percentOfMelt }];
+  if (row.percentOfMelt === null) return [];
+  return [{ kind: row.linkedPercent === null ? 'price' : 'linked', percent: row.percentOfMelt }];
 }
 
 type RowRuleProps = { row: RegisterRow; quotedAt: string | null; window: RuleWindow };

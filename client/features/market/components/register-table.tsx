@@ -1,5 +1,6 @@
 import { Link } from 'react-router-dom';
 import type { RegisterRow } from '#shared/schemas/lots.ts';
+import { AskedPrice } from '../../../components/figures/asked-price.tsx';
 import { Fineness } from '../../../components/figures/fineness.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import type { RuleWindow } from '../../../components/figures/melt-rule-geometry.ts';
@@ -43,7 +44,9 @@ export function RegisterTable({ rows, quotedAt, window }: RegisterListProps) {
             Price, US$
           </th>
           <th scope="col" className="py-3 pl-3 text-right font-normal">
-            Closes, {formatZone(quotedAt ?? new Date().toISOString(), timeZone)}
+            <span className="whitespace-nowrap">
+              Closes, {formatZone(quotedAt ?? new Date().toISOString(), timeZone)}
+            </span>
           </th>
         </tr>
       </thead>
@@ -96,7 +99,7 @@ function TableRow({ row, quotedAt, window }: TableRowProps) {
         <RowRule row={row} quotedAt={quotedAt} window={window} />
       </td>
       <td className={right}>
-        <Money bare value={row.price.amount} className="font-medium" />
+        <AskedPrice row={row} bare />
         {row.settlesOn === 'final' && (
           <span className="block text-note text-ink-2">settles on final assay</span>
         )}

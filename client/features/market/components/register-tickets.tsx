@@ -1,5 +1,6 @@
 import { Link } from 'react-router-dom';
 import type { RegisterRow } from '#shared/schemas/lots.ts';
+import { AskedPrice } from '../../../components/figures/asked-price.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { Quantity } from '../../../components/figures/quantity.tsx';
 import { DataList } from '../../../components/ui/data-list.tsx';
@@ -47,7 +48,7 @@ export function RegisterTickets({ rows, quotedAt, window }: RegisterListProps) {
 
 function ticketRows(row: RegisterRow, zone: string) {
   return [
-    { term: 'Price', data: <Money value={row.price.amount} className="font-medium" /> },
+    { term: 'Price', data: <AskedPrice row={row} /> },
     {
       term: 'Melt now',
       data: row.melt ? <Money value={row.melt.value} /> : 'no quote',

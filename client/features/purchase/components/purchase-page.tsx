@@ -1,6 +1,7 @@
 import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
+import { PriceFixPanel } from '../../../components/figures/price-fix-panel.tsx';
 import { LinkButton } from '../../../components/ui/button.tsx';
 import { Notice } from '../../../components/ui/notice.tsx';
 import { OfflineNotice } from '../../../components/ui/offline-notice.tsx';
@@ -43,7 +44,12 @@ export function PurchasePage({ code }: { code: string }) {
           onPay={() => payment.mutate(deal.code)}
         />
       ) : total && (lot.can.buy || purchase.isPending) ? (
-        <PurchaseFields lot={lot} total={total} purchase={purchase} />
+        <>
+          <div className="mb-6">
+            <PriceFixPanel lot={lot} />
+          </div>
+          <PurchaseFields lot={lot} total={total} purchase={purchase} />
+        </>
       ) : purchase.error ? (
         <PurchaseRefusal error={purchase.error} code={code} totalBefore={null} totalNow={total} />
       ) : (
@@ -56,7 +62,7 @@ export function PurchasePage({ code }: { code: string }) {
 function NotForSale({ lot }: { lot: LotAnswer }) {
   return (
     <Notice title={lot.isMine ? 'This lot is your own' : 'This lot cannot be bought now'}>
-      <p>{stateWords(lot)}</p>
+      {lot.linkedPercent === null ? <p>{stateWords(lot)}</p> : <PriceFixPanel lot={lot} />}
       <div className="mt-3 flex flex-wrap gap-3">
         {lot.dealCode && <LinkButton to={paths.deal(lot.dealCode)}>Open deal {lot.dealCode}</LinkButton>}
         <LinkButton look="second" to={paths.lot(lot.code)}>

@@ -40,6 +40,17 @@ export function PurchaseRefusal({ error, code, totalBefore, totalNow }: Purchase
         <div>{others}</div>
       </Notice>
     );
+  if (problem === 'price-fix-ended' || problem === 'price-fix-required')
+    return (
+      <Notice tone="attention" role="alert" title="The price fix has ended">
+        Nothing was bought and nothing is owed. The price follows the quote again.
+        <div>
+          <LinkButton look="second" to={paths.lot(code)} className="mt-3">
+            Back to the lot
+          </LinkButton>
+        </div>
+      </Notice>
+    );
   if (problem === 'price-changed')
     return (
       <Notice tone="attention" role="alert" title="The total has changed">

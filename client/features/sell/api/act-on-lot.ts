@@ -6,7 +6,8 @@ import { lotUrl } from '../../../lib/lots.ts';
 export type LotAct =
   | { act: 'redraft' | 'pause' | 'reopen' }
   | { act: 'withdraw'; reason: string }
-  | { act: 'price'; price: string };
+  | { act: 'price'; price: string }
+  | { act: 'price'; linkedPercent: string };
 
 /** Does it and answers the lot as it then stands. */
 export function actOnLot(code: string, { act, ...body }: LotAct): Promise<LotAnswer> {

@@ -3,6 +3,7 @@ import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { Button } from '../../../components/ui/button.tsx';
 import { Notice } from '../../../components/ui/notice.tsx';
 import { useLotAct } from '../hooks/use-lot-act.ts';
+import { LinkedPercentForm } from './linked-percent-form.tsx';
 import { NewLotButton } from './new-lot-button.tsx';
 import { PriceForm } from './price-form.tsx';
 import { WithdrawForm } from './withdraw-form.tsx';
@@ -14,12 +15,13 @@ export function LotActs({ lot, onRedrafted }: LotActsProps) {
   const [open, setOpen] = useState<'price' | 'withdraw' | null>(null);
   const plain = useLotAct(lot.code, (after) => after.can.edit && onRedrafted(after));
   const { can } = lot;
+  const ChangeForm = lot.linkedPercent === null ? PriceForm : LinkedPercentForm;
   const close = () => setOpen(null);
   const act = (name: 'redraft' | 'pause' | 'reopen') => () => plain.mutate({ act: name });
   const busy = plain.isPending;
   return (
     <div className="no-print mb-10">
-      {open === 'price' && can.changePrice && <PriceForm lot={lot} onClose={close} />}
+      {open === 'price' && can.changePrice && <ChangeForm lot={lot} onClose={close} />}
       {open === 'withdraw' && can.withdraw && <WithdrawForm lot={lot} onClose={close} />}
       {open === null && (
         <div className="flex flex-wrap items-start gap-3">

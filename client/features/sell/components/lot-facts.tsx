@@ -9,8 +9,9 @@ import { Mass } from '../../../components/figures/mass.tsx';
 import { Money } from '../../../components/figures/money.tsx';
 import { DataList, type DataListRow } from '../../../components/ui/data-list.tsx';
 import { Deadline } from '../../../components/ui/time.tsx';
+import { AskedPrice } from '../../../components/figures/asked-price.tsx';
 import { countryName } from '../../../lib/countries.ts';
-import { formatDate, formatQuantity } from '../../../lib/format.ts';
+import { formatDate, formatPercent, formatQuantity } from '../../../lib/format.ts';
 
 function Content({ content }: { content: ContentAnswer }) {
   const { element, method } = content;
@@ -85,7 +86,8 @@ function rowsOf(lot: LotAnswer): DataListRow[] {
     ),
   });
   rows.push({ term: 'Evidence', data: <GradeStamp grade={lot.evidenceGrade} /> }, ...certificateRows(lot));
-  if (lot.price) rows.push({ term: 'Price', data: <Money value={lot.price.amount} /> });
+  if (lot.price || lot.linkedPercent) rows.push({ term: 'Price', data: <AskedPrice row={lot} /> });
+  if (lot.floorPercent) rows.push({ term: 'Floor', data: `${formatPercent(lot.floorPercent)} of melt` });
   if (lot.shipping) rows.push({ term: 'Insured parcel', data: <Money value={lot.shipping.amount} /> });
   rows.push({ term: 'Ships to', data: lot.destinations.map(countryName).join(', ') });
   if (lot.closesAt) rows.push({ term: 'Closes', data: <Deadline at={lot.closesAt} /> });

@@ -5,6 +5,7 @@ import { Money } from '../../../components/figures/money.tsx';
 import { SpecimenDrawing } from '../../../components/figures/specimen-drawing.tsx';
 import { Stamp } from '../../../components/ui/stamp.tsx';
 import { Time } from '../../../components/ui/time.tsx';
+import { formatPercent } from '../../../lib/format.ts';
 import { paths } from '../../../lib/paths.ts';
 import { stateWords } from '../lot-state-words.ts';
 
@@ -47,7 +48,10 @@ export function MyLotRow({ lot }: { lot: MyLot }) {
             </Link>
           )}
         </div>
-        <div className="md:text-right">{lot.price && <Money value={lot.price.amount} />}</div>
+        <div className="md:text-right">
+          {lot.price && <Money value={lot.price.amount} />}
+          {lot.linkedPercent && <>linked {formatPercent(lot.linkedPercent)}</>}
+        </div>
       </div>
     </li>
   );

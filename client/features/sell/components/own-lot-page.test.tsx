@@ -23,6 +23,8 @@ const nothingAllowed: LotAnswer['can'] = {
   reopen: false,
   copy: false,
   buy: false,
+  fixPrice: false,
+  giveUpFix: false,
   pull: false,
 };
 
@@ -65,7 +67,12 @@ function lotAnswer(part: Partial<LotAnswer>): LotAnswer {
     contents: [],
     evidenceGrade: 'certified',
     certificate: null,
+    pricingBasis: 'outright',
     price: usd('700.00'),
+    linkedPercent: null,
+    floorPercent: null,
+    priceWait: null,
+    priceFix: null,
     shipping: usd('20.00'),
     destinations: ['US'],
     closesAt: null,

@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import { MeasureError } from '#shared/domain-error.ts';
-import { checkPrice } from '#shared/lot-submission.ts';
+import { checkPrice } from '#shared/lot-pricing.ts';
 import { fromAmount, minorToAmount } from '#shared/money.ts';
 import type { LotAnswer } from '#shared/schemas/lots.ts';
 import { explainCommission } from '#shared/settlement/commission.ts';
