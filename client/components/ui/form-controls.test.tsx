@@ -30,7 +30,7 @@ describe('Field', () => {
     expect(input).toHaveAttribute('inputmode', 'decimal');
     expect(input).toHaveAttribute('type', 'text');
     const error = screen.getByText('Type a number above zero.');
-    expect(error.compareDocumentPosition(input) & Node.DOCUMENT_POSITION_FOLLOWING).toBeTruthy();
+    expect(error.compareDocumentPosition(input)).toBe(Node.DOCUMENT_POSITION_FOLLOWING);
   });
 
   it('says that an optional field may be left out, and calls nothing wrong that is right', () => {
